@@ -1,0 +1,15 @@
+# Defines Arb::Arb, ball arithmetic: the second interval engine, used by the tests alone. Where Arb has become part of
+# FLINT 3 its headers are flint/arb.h and there is no library of its own.
+find_path(ARB_INCLUDE_DIR NAMES arb.h PATH_SUFFIXES flint)
+find_library(ARB_LIBRARY NAMES flint-arb arb)
+find_library(FLINT_LIBRARY flint)
+include(FindPackageHandleStandardArgs)
+find_package_handle_standard_args(Arb DEFAULT_MSG ARB_INCLUDE_DIR FLINT_LIBRARY)
+if(Arb_FOUND AND NOT TARGET Arb::Arb)
+  add_library(Arb::Arb INTERFACE IMPORTED)
+  target_include_directories(Arb::Arb SYSTEM INTERFACE ${ARB_INCLUDE_DIR})
+  if(ARB_LIBRARY)
+    target_link_libraries(Arb::Arb INTERFACE ${ARB_LIBRARY})
+  endif()
+  target_link_libraries(Arb::Arb INTERFACE ${FLINT_LIBRARY} mpfr gmp)
+endif()

@@ -1,0 +1,11 @@
+# Defines GMP::gmpxx, the C++ interface to GMP.
+find_path(GMP_INCLUDE_DIR gmpxx.h)
+find_library(GMP_LIBRARY gmp)
+find_library(GMPXX_LIBRARY gmpxx)
+include(FindPackageHandleStandardArgs)
+find_package_handle_standard_args(GMP DEFAULT_MSG GMP_INCLUDE_DIR GMP_LIBRARY GMPXX_LIBRARY)
+if(GMP_FOUND AND NOT TARGET GMP::gmpxx)
+  add_library(GMP::gmpxx INTERFACE IMPORTED)
+  target_include_directories(GMP::gmpxx SYSTEM INTERFACE ${GMP_INCLUDE_DIR})
+  target_link_libraries(GMP::gmpxx INTERFACE ${GMPXX_LIBRARY} ${GMP_LIBRARY})
+endif()

@@ -1,0 +1,11 @@
+# Defines MPFI::MPFI, interval arithmetic on MPFR.
+find_path(MPFI_INCLUDE_DIR mpfi.h)
+find_library(MPFI_LIBRARY mpfi)
+find_library(MPFR_LIBRARY mpfr)
+include(FindPackageHandleStandardArgs)
+find_package_handle_standard_args(MPFI DEFAULT_MSG MPFI_INCLUDE_DIR MPFI_LIBRARY MPFR_LIBRARY)
+if(MPFI_FOUND AND NOT TARGET MPFI::MPFI)
+  add_library(MPFI::MPFI INTERFACE IMPORTED)
+  target_include_directories(MPFI::MPFI SYSTEM INTERFACE ${MPFI_INCLUDE_DIR})
+  target_link_libraries(MPFI::MPFI INTERFACE ${MPFI_LIBRARY} ${MPFR_LIBRARY} gmp)
+endif()
