@@ -4,7 +4,6 @@
 // quantities (quantities.hpp) are formed from either.
 
 #include <array>
-#include <memory>
 #include <optional>
 #include <string>
 #include <vector>
@@ -45,24 +44,18 @@ struct Bounded {
   Interval tail;
 };
 
-// f(phi), f'(phi), f''(phi) enclosed over an interval of phi.
-struct Jet {
-  Interval value;
-  Interval first;
-  Interval second;
-};
-
 // The joint probability of the herald, left plus and right plus clicking and both cross detectors silent, as a function of
-// phi = 2 * right analyser angle in radians, corrected as in Basis::analyser; period 2 pi. The true function lies between
-// the profile and the profile plus tail().
-class AngularProfile {
- public:
-  virtual ~AngularProfile() = default;
-  virtual Jet at(const Interval& phi) const = 0;
-  virtual Interval tail() const = 0;
-  virtual std::vector<long> cutoff() const = 0;
-  // True where the profile is certainly the same at every angle.
-  virtual bool is_constant() const = 0;
+// phi = 2 * right analyser angle in radians (for N = 0: 2 * (right - left)), corrected as in Basis::analyser:
+//
+//   P(phi) = sum_{q=0..Q} ( cosine[q] cos q phi + sine[q] sin q phi ) + r(phi) + e(phi)
+//
+// with |r|, |r'|, |r''| <= remainder[0], [1], [2] for every phi, and 0 <= e(phi) <= tail. sine[0] is 0.
+struct AngularProfile {
+  std::vector<Interval> cosine;
+  std::vector<Interval> sine;
+  std::array<Interval, 3> remainder;
+  Interval tail;
+  std::vector<long> cutoff;  // as in Bounded
 };
 
 class Route {
@@ -72,7 +65,7 @@ class Route {
   virtual Bounded<Interval> herald(const Accuracy& accuracy) const = 0;
   virtual Bounded<EndTable<Interval>> ends(Basis basis, const Accuracy& accuracy) const = 0;
   virtual Bounded<Interval> pattern(const model::Pattern& pattern, const Accuracy& accuracy) const = 0;
-  virtual std::unique_ptr<AngularProfile> profile(const Accuracy& accuracy) const = 0;
+  virtual AngularProfile profile(const Accuracy& accuracy) const = 0;
 };
 
 }  // namespace heraldgauge::reference
