@@ -25,9 +25,14 @@ Rational scaled_by_power_of_ten(const Rational& x, long exponent) {
 Integer rounded(const Rational& x, Direction direction) {
   Integer result;
   switch (direction) {
-    case Direction::down: mpz_fdiv_q(result.get_mpz_t(), x.get_num_mpz_t(), x.get_den_mpz_t()); return result;
-    case Direction::up: mpz_cdiv_q(result.get_mpz_t(), x.get_num_mpz_t(), x.get_den_mpz_t()); return result;
-    case Direction::nearest: break;
+    case Direction::down:
+      mpz_fdiv_q(result.get_mpz_t(), x.get_num_mpz_t(), x.get_den_mpz_t());
+      return result;
+    case Direction::up:
+      mpz_cdiv_q(result.get_mpz_t(), x.get_num_mpz_t(), x.get_den_mpz_t());
+      return result;
+    case Direction::nearest:
+      break;
   }
   const Rational doubled = 2 * x + 1;
   mpz_fdiv_q(result.get_mpz_t(), doubled.get_num_mpz_t(), Integer(2 * doubled.get_den()).get_mpz_t());
@@ -44,7 +49,8 @@ std::string written(std::string digits, long exponent) {
   }
   const long count = static_cast<long>(digits.size());
   const long leading = exponent + count - 1;  // decimal exponent of the first digit
-  if (exponent >= 0 && exponent <= zeros_allowed_after) return digits + std::string(static_cast<std::size_t>(exponent), '0');
+  if (exponent >= 0 && exponent <= zeros_allowed_after)
+    return digits + std::string(static_cast<std::size_t>(exponent), '0');
   if (exponent < 0 && leading >= 0) return digits.insert(static_cast<std::size_t>(leading + 1), ".");
   if (exponent < 0 && leading >= smallest_plain_exponent) {
     return "0." + std::string(static_cast<std::size_t>(-leading - 1), '0') + digits;
@@ -61,7 +67,8 @@ long decimal_exponent(const Rational& x) {
   long denominator_exponent = 0;
   const double numerator = mpz_get_d_2exp(&numerator_exponent, magnitude.get_num_mpz_t());
   const double denominator = mpz_get_d_2exp(&denominator_exponent, magnitude.get_den_mpz_t());
-  const double log2 = std::log2(numerator / denominator) + static_cast<double>(numerator_exponent - denominator_exponent);
+  const double log2 =
+      std::log2(numerator / denominator) + static_cast<double>(numerator_exponent - denominator_exponent);
   long exponent = static_cast<long>(std::floor(log2 * std::log10(2.0)));
   while (magnitude < scaled_by_power_of_ten(1, exponent)) --exponent;
   while (magnitude >= scaled_by_power_of_ten(1, exponent + 1)) ++exponent;

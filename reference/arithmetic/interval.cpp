@@ -222,18 +222,29 @@ Interval midpoint(const Interval& x) {
   return result;
 }
 
+Interval lower_end(const Interval& x) {
+  Interval result(x.precision());
+  mpfi_set_fr(result.raw(), &x.raw()->left);
+  return result;
+}
+
+Interval upper_end(const Interval& x) {
+  Interval result(x.precision());
+  mpfi_set_fr(result.raw(), &x.raw()->right);
+  return result;
+}
+
 Interval raised(const Interval& x, const Interval& extra) {
   Interval result = x;
   mpfr_add(&result.raw()->right, &x.raw()->right, &extra.raw()->right, MPFR_RNDU);
   return result;
 }
 
-bool certainly_less(const Interval& a, const Interval& b) {
-  return mpfr_less_p(&a.raw()->right, &b.raw()->left) != 0;
-}
+bool certainly_less(const Interval& a, const Interval& b) { return mpfr_less_p(&a.raw()->right, &b.raw()->left) != 0; }
 
 bool overlap(const Interval& a, const Interval& b) {
-  return mpfr_lessequal_p(&a.raw()->left, &b.raw()->right) != 0 && mpfr_lessequal_p(&b.raw()->left, &a.raw()->right) != 0;
+  return mpfr_lessequal_p(&a.raw()->left, &b.raw()->right) != 0 &&
+         mpfr_lessequal_p(&b.raw()->left, &a.raw()->right) != 0;
 }
 
 Interval enclose(const model::Real& value, Precision bits) { return value.evaluate(Engine{bits}); }

@@ -1,6 +1,7 @@
 #pragma once
-// Intervals with outward rounding: a thin owner of mpfi_t. The promise of every function below: if each argument contains
-// a number x_i, the result contains f(x_1, ...). Rounding is done by MPFR in software, never by the hardware's modes.
+// Intervals with outward rounding: a thin owner of mpfi_t. The promise of every function below: if each argument
+// contains a number x_i, the result contains f(x_1, ...). Rounding is done by MPFR in software, never by the hardware's
+// modes.
 //
 // Precision belongs to the object, in bits of each end's significand (at least 2). The result of an operator has the
 // larger precision of its operands. There is no operator<: comparisons are certain, or answer "not certain".
@@ -48,8 +49,8 @@ class Interval {
   // The ends as exact numbers; both require is_bounded().
   Rational lower() const;
   Rational upper() const;
-  // log2 of an upper bound on (upper - lower), and of a lower bound on min |x|; -infinity for 0. For choosing precisions
-  // and cut-offs only, never for a certificate.
+  // log2 of an upper bound on (upper - lower), and of a lower bound on min |x|; -infinity for 0. For choosing
+  // precisions and cut-offs only, never for a certificate.
   double log2_width() const;
   double log2_mignitude() const;
 
@@ -78,16 +79,16 @@ Interval operator*(const Interval& a, const Interval& b);
 Interval operator/(const Interval& a, const Interval& b);
 Interval operator*(const Interval& a, long b);
 
-Interval square(const Interval& x);               // x^2, never negative
+Interval square(const Interval& x);                  // x^2, never negative
 Interval power(const Interval& x, unsigned long n);  // x^n by repeated squaring
-Interval square_root(const Interval& x);          // requires x >= 0
+Interval square_root(const Interval& x);             // requires x >= 0
 Interval exponential(const Interval& x);
 Interval power_of_ten(const Interval& x);
-Interval logarithm(const Interval& x);            // natural; requires x > 0
-Interval binary_logarithm(const Interval& x);     // requires x > 0
-Interval logarithm_1p(const Interval& x);         // ln(1+x); requires x > -1
+Interval logarithm(const Interval& x);         // natural; requires x > 0
+Interval binary_logarithm(const Interval& x);  // requires x > 0
+Interval logarithm_1p(const Interval& x);      // ln(1+x); requires x > -1
 Interval hyperbolic_tangent(const Interval& x);
-Interval cosine(const Interval& x);               // radians
+Interval cosine(const Interval& x);  // radians
 Interval sine(const Interval& x);
 Interval pi(Precision bits);
 Interval log_of_2(Precision bits);
@@ -99,7 +100,9 @@ Interval restricted(const Interval& x, const Rational& lower, const Rational& up
 // [min(a), ...]: encloses max(x, y) and min(x, y).
 Interval larger_of(const Interval& a, const Interval& b);
 Interval smaller_of(const Interval& a, const Interval& b);
-Interval midpoint(const Interval& x);             // a point inside x
+Interval midpoint(const Interval& x);   // a point inside x
+Interval lower_end(const Interval& x);  // the ends of x as points
+Interval upper_end(const Interval& x);
 // x with its upper end raised by the upper end of extra (extra >= 0): [x.lower, x.upper + extra.upper].
 Interval raised(const Interval& x, const Interval& extra);
 
