@@ -42,6 +42,7 @@ template <class Function>
 Interval apply(Function function, const Interval& x) {
   Interval result(x.precision());
   function(result.raw(), x.raw());
+  result.claim_nothing_where_undefined();
   return result;
 }
 
@@ -83,6 +84,14 @@ Interval& Interval::operator=(const Interval& other) {
 Interval& Interval::operator=(Interval&& other) noexcept {
   std::swap(*data_, *other.data_);
   return *this;
+}
+
+void Interval::claim_nothing_where_undefined() {
+  const bool ordered = mpfr_lessequal_p(&data_->left, &data_->right) != 0;  // false where an end is NaN
+  const bool infinite_point = mpfr_inf_p(&data_->left) != 0 && mpfr_equal_p(&data_->left, &data_->right) != 0;
+  if (ordered && !infinite_point) return;
+  mpfr_set_inf(&data_->left, -1);
+  mpfr_set_inf(&data_->right, 1);
 }
 
 bool Interval::contains(const Rational& value) const {
@@ -198,6 +207,7 @@ Interval absolute(const Interval& x) { return apply(mpfi_abs, x); }
 Interval restricted(const Interval& x, const Rational& lower, const Rational& upper) {
   Interval result(x.precision());
   mpfi_intersect(result.raw(), x.raw(), Interval(lower, upper, x.precision()).raw());
+  result.claim_nothing_where_undefined();
   return result;
 }
 
@@ -219,6 +229,7 @@ Interval midpoint(const Interval& x) {
   Interval result(x.precision());
   mpfi_mid(&result.raw()->left, x.raw());
   mpfr_set(&result.raw()->right, &result.raw()->left, MPFR_RNDN);
+  result.claim_nothing_where_undefined();
   return result;
 }
 

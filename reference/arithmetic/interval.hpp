@@ -5,7 +5,9 @@
 //
 // Precision belongs to the object, in bits of each end's significand (at least 2). The result of an operator has the
 // larger precision of its operands. There is no operator<: comparisons are certain, or answer "not certain".
-// Dividing by an interval that contains 0 gives an unbounded interval; is_bounded() tells.
+// Dividing by an interval that contains 0 gives an unbounded interval; is_bounded() tells. No end is ever NaN: where a
+// function is not defined on all of its argument (0/0, the root of a negative number), the result is the whole line,
+// which claims nothing. A moved-from object may be assigned to or destroyed, nothing else.
 
 #include <mpfi.h>
 
@@ -64,7 +66,13 @@ class Interval {
   static void add(Interval& out, const Interval& a, const Interval& b) { mpfi_add(out.data_, a.data_, b.data_); }
   static void subtract(Interval& out, const Interval& a, const Interval& b) { mpfi_sub(out.data_, a.data_, b.data_); }
   static void multiply(Interval& out, const Interval& a, const Interval& b) { mpfi_mul(out.data_, a.data_, b.data_); }
-  static void divide(Interval& out, const Interval& a, const Interval& b) { mpfi_div(out.data_, a.data_, b.data_); }
+  static void divide(Interval& out, const Interval& a, const Interval& b) {
+    mpfi_div(out.data_, a.data_, b.data_);
+    out.claim_nothing_where_undefined();
+  }
+  // Becomes the whole line where an end is NaN, the lower end +infinity, the upper end -infinity, or the ends are
+  // crossed.
+  void claim_nothing_where_undefined();
 
   mpfi_ptr raw() { return data_; }
   mpfi_srcptr raw() const { return data_; }
@@ -95,12 +103,13 @@ Interval log_of_2(Precision bits);
 
 Interval hull(const Interval& a, const Interval& b);
 Interval absolute(const Interval& x);
-// The part of x in [lower, upper], for quantities that are known to lie there; requires that the two meet.
+// The part of x in [lower, upper], for quantities that are known to lie there. Where the two do not meet, something was
+// wrong before, and the result is the whole line.
 Interval restricted(const Interval& x, const Rational& lower, const Rational& upper);
-// [min(a), ...]: encloses max(x, y) and min(x, y).
+// Enclose max(x, y) and min(x, y).
 Interval larger_of(const Interval& a, const Interval& b);
 Interval smaller_of(const Interval& a, const Interval& b);
-Interval midpoint(const Interval& x);   // a point inside x
+Interval midpoint(const Interval& x);   // a point inside x; requires is_bounded()
 Interval lower_end(const Interval& x);  // the ends of x as points
 Interval upper_end(const Interval& x);
 // x with its upper end raised by the upper end of extra (extra >= 0): [x.lower, x.upper + extra.upper].
