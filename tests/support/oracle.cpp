@@ -153,7 +153,8 @@ Rational OracleRow::upper() const { return value + half_last_digit + bound; }
 std::vector<OracleRow> oracle_rows() {
   std::ifstream file(HERALDGAUGE_SOURCE_DIR "/tests/published/oracle.json");
   std::vector<OracleRow> rows;
-  for (const Json& row : Json::parse(file).at("rows")) rows.push_back(read(row));
+  const Json document = Json::parse(file);
+  for (const Json& row : document.at("rows")) rows.push_back(read(row));
   return rows;
 }
 

@@ -43,7 +43,8 @@ PublishedEntry read(const Json& entry) {
 std::vector<PublishedEntry> published_entries() {
   std::ifstream file(HERALDGAUGE_SOURCE_DIR "/tests/published/published.json");
   std::vector<PublishedEntry> entries;
-  for (const Json& entry : Json::parse(file).at("entries")) entries.push_back(read(entry));
+  const Json document = Json::parse(file);
+  for (const Json& entry : document.at("entries")) entries.push_back(read(entry));
   return entries;
 }
 
