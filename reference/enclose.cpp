@@ -5,6 +5,7 @@
 #include <memory>
 
 #include "reference/arithmetic/decimal.hpp"
+#include "reference/determinant/route.hpp"
 #include "reference/quantity_values.hpp"
 #include "reference/route_choice.hpp"
 #include "reference/width.hpp"
@@ -19,8 +20,9 @@ using model::Faults;
 using model::Quantity;
 using model::QuantityKind;
 
-constexpr std::size_t most_stations_in_rationals = 2;  // above that only on request: the numbers grow too long
-constexpr std::size_t most_bits_in_rationals = 20000;  // of all inputs together, likewise
+// Above these only on request: a sum of rationals has about as many bits as all its denominators together.
+constexpr std::size_t most_stations_in_rationals = 2;
+constexpr double most_bits_in_rationals = 6e4;  // terms of the sum over the stations, times the bits of all inputs
 constexpr Precision first_guard_bits = 64;
 constexpr double spare_bits = 12;
 constexpr int most_attempts = 16;
@@ -42,7 +44,10 @@ std::vector<Basis> bases_of(QuantityKind kind) {
 class Certifier {
  public:
   Certifier(const Chain& chain, const Request& request, RouteName route)
-      : chain_(chain), request_(request), route_(route), irrational_(irrational_input(chain)), exact_(chain) {}
+      : chain_(chain), request_(request), route_(route), irrational_(irrational_input(chain)), exact_(chain) {
+    rationals_are_short_ = !request.intervals_only && chain.station_count() <= most_stations_in_rationals &&
+                           determinant_terms(chain) * static_cast<double>(input_bits(chain)) <= most_bits_in_rationals;
+  }
 
   Result certify(const Quantity& quantity) {
     if (is_capacity(quantity.kind)) return certify_capacity(quantity);
@@ -68,13 +73,13 @@ class Certifier {
     for (const Basis basis : bases_of(kind)) {
       if (!has_rational_angles(chain_, basis)) return false;
     }
-    return request_.exact || (chain_.station_count() <= most_stations_in_rationals &&
-                              input_bits(chain_) <= most_bits_in_rationals);
+    return request_.exact || rationals_are_short_;
   }
 
   Result rational_result(const Quantity& quantity) {
     const Computed<Rational> computed = rational_quantity(exact_, chain_, quantity, request_.pattern);
-    Result result{quantity, Status::undefined, computed.undefined, std::nullopt, {"determinant", {}, 0, std::nullopt}, 0};
+    Result result{quantity, Status::undefined, computed.undefined, std::nullopt, {"determinant", {}, 0, std::nullopt},
+                  0};
     if (!computed.value) return result;
     result.status = Status::certified;
     result.enclosure = Enclosure{*computed.value, *computed.value};
@@ -177,6 +182,7 @@ class Certifier {
   const Request& request_;
   const RouteName route_;
   const std::optional<std::string> irrational_;
+  bool rationals_are_short_ = false;
   ExactTables exact_;
   std::optional<IntervalTables> tables_;
 };
@@ -201,7 +207,8 @@ Faults request_faults(const Chain& chain, const Request& request) {
     }
   }
   if (request.exact && request.route == RouteChoice::pair_number) {
-    faults.push_back(argument_fault("--exact", "the pair-number route cuts off an infinite sum", "--route determinant"));
+    faults.push_back(
+        argument_fault("--exact", "the pair-number route cuts off an infinite sum", "--route determinant"));
   }
   return faults;
 }
@@ -217,8 +224,9 @@ Expected<std::vector<Result>> enclose(const Chain& chain, const Request& request
   Certifier certifier(chain, request, *route);
   for (const Quantity& quantity : request.quantities) {
     const auto irrational = request.exact ? certifier.irrational_part(quantity) : std::nullopt;
-    if (irrational) faults.push_back(argument_fault("--exact", model::name_of(quantity) + " has no exact rational: " + *irrational,
-                                                    "quantities and inputs that are rational"));
+    if (irrational)
+      faults.push_back(argument_fault("--exact", model::name_of(quantity) + " has no exact rational: " + *irrational,
+                                      "quantities and inputs that are rational"));
   }
   if (!faults.empty()) return faults;
 

@@ -23,7 +23,9 @@ struct Request {
   // herald_probability for key_rate, 0 for all others. From 1 to largest_digits.
   int digits = 30;
   RouteChoice route = RouteChoice::cheaper;
-  bool exact = false;  // exact rationals, or a fault that names what is irrational
+  // Exact rationals are used where they are possible and short: at most two stations and inputs of moderate length.
+  bool exact = false;           // always exact rationals, or a fault that names what is irrational
+  bool intervals_only = false;  // never exact rationals: many values at few digits are quicker in intervals
   long largest_precision_bits = 1L << 18;
 };
 
@@ -54,11 +56,12 @@ struct Result {
   int digits = 0;  // certified: floor(-log10 of the relative width), at most the asked digits; 99 where exact
 };
 
-// One result a quantity, in the order asked. Faults name a combination that cannot be served: a pattern that is missing or
-// does not fit the chain, a forced route that cannot serve the chain, --exact with an irrational input or quantity.
+// One result a quantity, in the order asked. Faults name a combination that cannot be served: a pattern that is missing
+// or does not fit the chain, a forced route that cannot serve the chain, --exact with an irrational input or quantity.
 model::Expected<std::vector<Result>> enclose(const model::Chain& chain, const Request& request);
 
-// A result as decimals of at most digits + 2 significant digits: value inside [lower, upper], lower rounded down, upper up.
+// A result as decimals of at most digits + 2 significant digits: value inside [lower, upper], lower rounded down, upper
+// up.
 struct DecimalEnclosure {
   std::string value;
   std::string lower;

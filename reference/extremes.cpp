@@ -10,7 +10,8 @@ constexpr int first_boxes = 32;
 constexpr int deepest_halving = 40;
 constexpr std::size_t most_boxes = 200;
 constexpr Precision search_bits = 128;
-constexpr double negligible_log2 = -40;  // harmonics below 2^-40 of the largest are bounded, not evaluated, in the search
+constexpr double negligible_log2 =
+    -40;  // harmonics below 2^-40 of the largest are bounded, not evaluated, in the search
 
 struct Jet {
   Interval value, first, second;
@@ -69,7 +70,8 @@ class Series {
   }
   static Interval symmetric(const Interval& bound) { return hull(bound, -bound); }
 
-  // cos q phi, sin q phi from q - 1: by the addition theorem at a point, afresh over a box, where the theorem would widen.
+  // cos q phi, sin q phi from q - 1: by the addition theorem at a point, afresh over a box, where the theorem would
+  // widen.
   static void rotate(Interval& c, Interval& s, const Interval& c1, const Interval& s1, const Interval& phi, long q,
                      Interval& product, Interval& next) {
     if (phi.log2_width() > -60) {
@@ -167,7 +169,8 @@ class Search {
     const Jet jet = series_.at(box.interval(series_.bits()));
     if (jet.first.is_certainly_positive() || jet.first.is_certainly_negative()) return;
     if (is_beaten(value_over(box, jet))) return;
-    if (jet.second.is_certainly_positive()) return;  // an interior maximum needs h'' <= 0; the ends belong to neighbours too
+    if (jet.second.is_certainly_positive())
+      return;  // an interior maximum needs h'' <= 0; the ends belong to neighbours too
     if (jet.second.is_certainly_negative()) {
       candidates.concave.push_back(box);
     } else if (depth >= deepest_halving || next.size() + candidates.unclear.size() > most_boxes) {
@@ -180,7 +183,8 @@ class Search {
     }
   }
   void drop_beaten(std::vector<Box>& boxes) const {
-    std::erase_if(boxes, [&](const Box& box) { return is_beaten(value_over(box, series_.at(box.interval(series_.bits())))); });
+    std::erase_if(boxes,
+                  [&](const Box& box) { return is_beaten(value_over(box, series_.at(box.interval(series_.bits())))); });
   }
 
   const Series& series_;
@@ -212,30 +216,35 @@ struct Maximum {
   double argument = 0;
 };
 
-// [h(c), h(c) + h'(c)^2 / (2 min |h''|)] in a concave box; what remains unclear widens the result upwards.
+// The maximum over a concave box: at an end where h still rises (or already falls), else by Taylor's formula at the
+// summit.
+Maximum maximum_in(const Series& search, const Series& full, const Box& box) {
+  const Jet at_lower = full.at(Interval(box.lower, full.bits()));
+  if (at_lower.first.is_certainly_negative()) return {at_lower.value, box.lower.get_d()};
+  const Jet at_upper = full.at(Interval(box.upper, full.bits()));
+  if (at_upper.first.is_certainly_positive()) return {at_upper.value, box.upper.get_d()};
+  const Rational c = summit(full, box);
+  const Jet point = full.at(Interval(c, full.bits()));
+  const Interval curvature = search.at(box.interval(search.bits())).second;
+  return {raised(point.value, square(point.first) / (-curvature * 2L)), c.get_d()};
+}
+
+// Over all boxes that may hold it; what remains unclear widens the result upwards.
 Maximum maximum_of(const Series& search, const Series& full) {
   const Candidates candidates = Search(search).run();
-  std::optional<Maximum> best;
-  const auto include = [&](const Interval& lower, const Interval& upper, const Rational& at) {
-    if (!best) {
-      best = Maximum{hull(lower, upper), at.get_d()};
-      return;
-    }
-    if (certainly_less(best->value, lower)) best->argument = at.get_d();
-    best->value = larger_of(best->value, hull(lower, upper));
-  };
-  for (const Box& box : candidates.concave) {
-    const Rational c = summit(full, box);
-    const Jet point = full.at(Interval(c, full.bits()));
-    const Interval curvature = search.at(box.interval(search.bits())).second;
-    const Interval excess = square(point.first) / (-curvature * 2L);
-    include(point.value, raised(point.value, excess), c);
-  }
+  std::vector<Maximum> maxima;
+  for (const Box& box : candidates.concave) maxima.push_back(maximum_in(search, full, box));
   for (const Box& box : candidates.unclear) {
     const Interval at_middle = full.at(Interval(box.middle(), full.bits())).value;
-    include(at_middle, hull(at_middle, full.at(box.interval(full.bits())).value), box.middle());
+    maxima.push_back({hull(at_middle, full.at(box.interval(full.bits())).value), box.middle().get_d()});
   }
-  return best ? *best : Maximum{unbounded(full.bits()), 0};
+  if (maxima.empty()) return {unbounded(full.bits()), 0};
+  Maximum best = maxima.front();
+  for (const Maximum& other : maxima) {
+    if (certainly_less(best.value, other.value)) best.argument = other.argument;
+    best.value = larger_of(best.value, other.value);
+  }
+  return best;
 }
 
 bool is_flat(const AngularProfile& profile) {

@@ -11,9 +11,9 @@
 namespace heraldgauge::reference {
 
 struct Extremes {
-  Interval mean;     // the harmonic q = 0
-  Interval largest;  // encloses max h, remainder included, tail not
-  Interval smallest; // encloses min h
+  Interval mean;                // the harmonic q = 0
+  Interval largest;             // encloses max h, remainder included, tail not
+  Interval smallest;            // encloses min h
   double argument_of_smallest;  // phi in radians where h is nearly smallest; a hint, no certificate
 };
 

@@ -4,7 +4,8 @@
 
 namespace heraldgauge::reference {
 
-Interval secret_share(const model::Protocol& protocol, const Interval& qber_rectilinear, const Interval& qber_diagonal) {
+Interval secret_share(const model::Protocol& protocol, const Interval& qber_rectilinear,
+                      const Interval& qber_diagonal) {
   const Precision bits = qber_rectilinear.precision();
   const Interval corrected = Interval(protocol.error_correction_factor, bits) * binary_entropy(qber_rectilinear);
   const Interval share = Interval(1L, bits) - corrected - binary_entropy(qber_diagonal);

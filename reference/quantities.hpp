@@ -1,5 +1,6 @@
 #pragma once
-// The quantities that are rational functions of the joint tables, in either arithmetic, and the key figures in intervals.
+// The quantities that are rational functions of the joint tables, in either arithmetic, and the key figures in
+// intervals.
 
 #include "reference/arithmetic/field.hpp"
 #include "reference/model/chain.hpp"
@@ -19,8 +20,8 @@ Number both_ends_click(const EndTable<Number>& table) {
   return sum;
 }
 
-// The erroneous share of that: outcomes that are not as expected; where an end has two clicks its outcome is drawn evenly,
-// so half of those.
+// The erroneous share of that: outcomes that are not as expected; where an end has two clicks its outcome is drawn
+// evenly, so half of those.
 template <class Number>
 Number erroneous(const Field<Number>& field, const EndTable<Number>& table, bool agreement_expected) {
   constexpr std::size_t both = 3;

@@ -36,9 +36,12 @@ Computed<typename Tables::Number> rational_quantity(Tables& tables, const Chain&
   using Number = typename Tables::Number;
   const Field<Number> field = tables.field();
   switch (quantity.kind) {
-    case QuantityKind::herald_probability: return {tables.herald(), "", std::nullopt};
-    case QuantityKind::pattern_probability: return {tables.pattern(*pattern), "", std::nullopt};
-    case QuantityKind::trials_per_herald: return ratio(field(1L), tables.herald(), no_herald);
+    case QuantityKind::herald_probability:
+      return {tables.herald(), "", std::nullopt};
+    case QuantityKind::pattern_probability:
+      return {tables.pattern(*pattern), "", std::nullopt};
+    case QuantityKind::trials_per_herald:
+      return ratio(field(1L), tables.herald(), no_herald);
     case QuantityKind::end_pattern: {
       const auto left = static_cast<std::size_t>(quantity.outcome >> 2);
       const auto right = static_cast<std::size_t>(quantity.outcome & 3);
@@ -52,7 +55,8 @@ Computed<typename Tables::Number> rational_quantity(Tables& tables, const Chain&
     case QuantityKind::qber_diagonal:
       if (is_exactly_zero(tables.herald())) break;
       return error_rate(tables, Basis::diagonal, diagonal_agreement_expected);
-    default: break;
+    default:
+      break;
   }
   return {std::nullopt, no_herald, std::nullopt};
 }
@@ -82,8 +86,8 @@ Computed<Interval> visibility_quantity(IntervalTables& tables, QuantityKind kind
   }
   const bool deficit = kind == QuantityKind::visibility_deficit;
   if (coincidence.touches_zero) return {Interval(deficit ? 0L : 1L, bits), "", std::nullopt};
-  if (deficit) return {coincidence.smallest * 2L / coincidence.sum, "", std::nullopt};
-  return {coincidence.spread / coincidence.sum, "", std::nullopt};
+  return {as_share(deficit ? coincidence.smallest * 2L / coincidence.sum : coincidence.spread / coincidence.sum), "",
+          std::nullopt};
 }
 
 Computed<Interval> capacity_quantity(const Chain& chain, QuantityKind kind, Precision bits) {

@@ -24,8 +24,8 @@ struct Computed {
 inline const std::string no_herald = "no herald can occur: herald_probability is 0";
 inline const std::string no_events = "no event has a click at each end: gain is 0";
 
-// The quantities that are rational in the tables; requires that the registry does not call the quantity irrational, and a
-// pattern for pattern_probability.
+// The quantities that are rational in the tables; requires that the registry does not call the quantity irrational, and
+// a pattern for pattern_probability.
 template <class Tables>
 Computed<typename Tables::Number> rational_quantity(Tables& tables, const model::Chain& chain,
                                                     const model::Quantity& quantity,

@@ -1,7 +1,7 @@
 #pragma once
 // What a certified route computes: probabilities, per trial, of a herald together with what the ends see, as intervals
-// that contain the exact value. Two routes exist, the determinant (determinant/) and the pair number (pair_number/); the
-// quantities (quantities.hpp) are formed from either.
+// that contain the exact value. Two routes exist, the determinant (determinant/) and the pair number (pair_number/);
+// the quantities (quantities.hpp) are formed from either.
 
 #include <array>
 #include <optional>
@@ -29,14 +29,16 @@ enum class Basis {
   diagonal,     // 45 and 45 degrees; for odd m the table has the bits recorded at the right end exchanged
 };
 
-// Joint probability of the herald and of exactly these clicks at the ends: joint[left][right], each index 2*plus + cross.
+// Joint probability of the herald and of exactly these clicks at the ends: joint[left][right], each index 2*plus +
+// cross.
 template <class Number>
 struct EndTable {
   std::array<std::array<Number, 4>, 4> joint;
+  friend bool operator==(const EndTable&, const EndTable&) = default;
 };
 
-// A value and what was left out of it: the pairs kept per source (empty: nothing cut off) and an upper bound on the tail,
-// which the value's upper end already includes.
+// A value and what was left out of it: the pairs kept per source (empty: nothing cut off) and an upper bound on the
+// tail, which the value's upper end already includes.
 template <class Value>
 struct Bounded {
   Value value;
@@ -44,8 +46,8 @@ struct Bounded {
   Interval tail;
 };
 
-// The joint probability of the herald, left plus and right plus clicking and both cross detectors silent, as a function of
-// phi = 2 * right analyser angle in radians (for N = 0: 2 * (right - left)), corrected as in Basis::analyser:
+// The joint probability of the herald, left plus and right plus clicking and both cross detectors silent, as a function
+// of phi = 2 * right analyser angle in radians (for N = 0: 2 * (right - left)), corrected as in Basis::analyser:
 //
 //   P(phi) = sum_{q=0..Q} ( cosine[q] cos q phi + sine[q] sin q phi ) + r(phi) + e(phi)
 //

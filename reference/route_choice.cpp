@@ -12,7 +12,9 @@ using model::Real;
 
 constexpr double most_determinant_terms = 4e6;
 
-Fault route_fault(const std::string& wrong, const std::string& allowed) { return {{"--route", 0, 0, ""}, wrong, allowed}; }
+Fault route_fault(const std::string& wrong, const std::string& allowed) {
+  return {{"--route", 0, 0, ""}, wrong, allowed};
+}
 
 // Why the determinant route cannot be taken, its cost included.
 std::optional<std::string> determinant_obstacle(const Chain& chain) {
@@ -29,7 +31,8 @@ std::size_t bits_of(const Real& x) {
 template <std::size_t Count>
 std::size_t bits_of(const std::array<model::Detector, Count>& detectors) {
   std::size_t bits = 0;
-  for (const model::Detector& detector : detectors) bits += bits_of(detector.efficiency) + bits_of(detector.dark_probability);
+  for (const model::Detector& detector : detectors)
+    bits += bits_of(detector.efficiency) + bits_of(detector.dark_probability);
   return bits;
 }
 

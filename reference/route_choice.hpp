@@ -10,8 +10,8 @@ namespace heraldgauge::reference {
 
 enum class RouteName { determinant, pair_number };
 
-// The forced route, or the cheaper of those that can serve. A fault names what the route cannot serve, or that its predicted
-// cost is beyond reach.
+// The forced route, or the cheaper of those that can serve. A fault names what the route cannot serve, or that its
+// predicted cost is beyond reach.
 model::Expected<RouteName> choose_route(const model::Chain& chain, const Request& request);
 
 std::unique_ptr<Route> make_route(RouteName name, const model::Chain& chain);

@@ -99,7 +99,7 @@ Interval IntervalTables::pattern(const model::Pattern& pattern) {
 
 // Where the smallest coincidence cannot be told from zero, a special angle may prove that it is zero.
 void IntervalTables::settle_zeros(Coincidence& coincidence, double argument_of_smallest) const {
-  if (!coincidence.smallest.contains_zero() || !may_examine_zeros()) return;
+  if (!coincidence.smallest.contains_zero()) return;
   const Rational candidate = nearest_special_angle(chain_, argument_of_smallest);
   coincidence.touches_zero = is_exactly_zero_coincidence(chain_, candidate) == true;
   coincidence.vanishes = is_zero_at_every_angle(chain_);
@@ -110,7 +110,8 @@ const IntervalTables::Coincidence& IntervalTables::coincidence() {
     const AngularProfile profile = route_->profile(accuracy_);
     const Extremes extremes = extremes_of(profile);
     const Interval either_way = hull(profile.tail, -profile.tail);
-    Coincidence value{extremes.largest - extremes.smallest + either_way, raised(extremes.mean + extremes.smallest, profile.tail),
+    Coincidence value{extremes.largest - extremes.smallest + either_way,
+                      raised(extremes.mean + extremes.smallest, profile.tail),
                       raised(extremes.mean * 2L + extremes.largest + extremes.smallest, profile.tail * 2L)};
     settle_zeros(value, extremes.argument_of_smallest);
     coincidence_ = Bounded<Coincidence>{std::move(value), profile.cutoff, profile.tail};
@@ -152,7 +153,8 @@ std::optional<std::string> irrational_input(const Chain& chain) {
     examine(chain.stations[k].background.photons, "the background of " + where + ",");
     for (const auto& detector : chain.stations[k].detectors) examine_detector(detector, where);
   }
-  for (const auto& [end, where] : {std::pair{&chain.left_end, "the left end"}, std::pair{&chain.right_end, "the right end"}}) {
+  for (const auto& [end, where] :
+       {std::pair{&chain.left_end, "the left end"}, std::pair{&chain.right_end, "the right end"}}) {
     examine(end->background.photons, std::string("the background of ") + where + ",");
     for (const auto& detector : end->detectors) examine_detector(detector, where);
   }

@@ -1,6 +1,6 @@
 #pragma once
-// The probabilities of one chain, computed when first asked for and kept: in intervals of a rising accuracy, or in exact
-// rationals.
+// The probabilities of one chain, computed when first asked for and kept: in intervals of a rising accuracy, or in
+// exact rationals.
 
 #include <map>
 #include <memory>
@@ -16,9 +16,9 @@ namespace heraldgauge::reference {
 
 // What went into a value: for its certificate, and to decide what to improve.
 struct Provenance {
-  std::vector<long> cutoff;           // the longest of the tables used
-  std::optional<Interval> tail;       // the largest
-  bool limited_by_tail = false;       // the tail is what makes some probability used wide
+  std::vector<long> cutoff;      // the longest of the tables used
+  std::optional<Interval> tail;  // the largest
+  bool limited_by_tail = false;  // the tail is what makes some probability used wide
 };
 
 class IntervalTables {
@@ -30,8 +30,8 @@ class IntervalTables {
   const Accuracy& accuracy() const { return accuracy_; }
   Field<Interval> field() const { return {accuracy_.bits}; }
 
-  // Forgets what was computed at a lower accuracy. From the second accuracy on, probabilities whose enclosure contains zero
-  // are examined for being exactly zero.
+  // Forgets what was computed at a lower accuracy. From the second accuracy on, probabilities whose enclosure contains
+  // zero are examined for being exactly zero.
   void improve(const Accuracy& accuracy);
   void begin_value() { provenance_ = {}; }
   const Provenance& provenance() const { return provenance_; }
@@ -42,11 +42,11 @@ class IntervalTables {
 
   // Largest and smallest value, over the right analyser angle, of the coincidence that defines the visibility.
   struct Coincidence {
-    Interval spread;             // max - min, from the harmonics alone, so that it keeps its digits where it is small
-    Interval smallest;           // min
-    Interval sum;                // max + min
-    bool touches_zero = false;   // min is exactly 0
-    bool vanishes = false;       // it is certainly zero at every angle
+    Interval spread;            // max - min, from the harmonics alone, so that it keeps its digits where it is small
+    Interval smallest;          // min
+    Interval sum;               // max + min
+    bool touches_zero = false;  // min is exactly 0
+    bool vanishes = false;      // it is certainly zero at every angle
   };
   const Coincidence& coincidence();
 
@@ -66,7 +66,8 @@ class IntervalTables {
   std::optional<Bounded<Coincidence>> coincidence_;
 };
 
-// Requires that the chain is rational at the angles asked for (is_rational_at) and that the determinant route serves it.
+// Requires that the chain is rational at the angles asked for (is_rational_at) and that the determinant route serves
+// it.
 class ExactTables {
  public:
   using Number = Rational;

@@ -8,11 +8,12 @@
 
 namespace heraldgauge::reference {
 
-// Whether upper - lower <= 10^-(digits+1) max(|x|, scale) for every x inside: one digit more than asked, so that outward
-// rounding to digits + 2 decimals still meets 10^-digits. An exact number is always narrow enough.
+// Whether upper - lower <= 10^-(digits+1) max(|x|, scale) for every x inside: one digit more than asked, so that
+// outward rounding to digits + 2 decimals still meets 10^-digits. An exact number is always narrow enough.
 bool is_narrow_enough(const Interval& x, const std::optional<Interval>& scale, int digits);
 
-// log2 of the factor by which the width is too large (> 0 where it is); nothing where x contains zero and no scale helps.
+// log2 of the factor by which the width is too large (> 0 where it is); nothing where x contains zero and no scale
+// helps.
 std::optional<double> missing_bits(const Interval& x, const std::optional<Interval>& scale, int digits);
 
 // floor(-log10 of width / max(|x|, scale)), from 0 to the asked digits; 99 for an exact number.

@@ -13,8 +13,8 @@ EndBlock<Number> end_block(const Field<Number>& field, const model::End& end, co
   };
   const Real p = registered(model::plus, plus_bit);
   const Real c = registered(model::cross, cross_bit);
-  const unsigned mask = ((silent & plus_bit) != 0 ? 1U << model::plus : 0U) |
-                        ((silent & cross_bit) != 0 ? 1U << model::cross : 0U);
+  const unsigned mask =
+      ((silent & plus_bit) != 0 ? 1U << model::plus : 0U) | ((silent & cross_bit) != 0 ? 1U << model::cross : 0U);
   return {field(Real(1) - (p + c) / Real(2)), field((p - c) / Real(2)), field((Real(1) - p) * (Real(1) - c)),
           no_dark_event(field, end.detectors, end.background, mask)};
 }

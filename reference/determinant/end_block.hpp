@@ -13,7 +13,7 @@
 
 namespace heraldgauge::reference {
 
-inline constexpr unsigned plus_bit = 2;   // index of an end's clicks or silent set: 2 * plus + cross
+inline constexpr unsigned plus_bit = 2;  // index of an end's clicks or silent set: 2 * plus + cross
 inline constexpr unsigned cross_bit = 1;
 
 template <class Number>

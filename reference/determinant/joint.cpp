@@ -87,9 +87,12 @@ std::vector<EndBlock<Number>> blocks_of(const Field<Number>& field, const model:
 
 EndAngles angles_of(const Chain& chain, Basis basis) {
   switch (basis) {
-    case Basis::rectilinear: return {0, 0};
-    case Basis::diagonal: return {45, 45};
-    case Basis::analyser: break;
+    case Basis::rectilinear:
+      return {0, 0};
+    case Basis::diagonal:
+      return {45, 45};
+    case Basis::analyser:
+      break;
   }
   return {chain.left_end.analyser_deg, chain.right_end.analyser_deg};
 }
@@ -97,9 +100,9 @@ EndAngles angles_of(const Chain& chain, Basis basis) {
 template <class Number>
 EndTable<Number> joint_table(const Field<Number>& field, const Chain& chain, Basis basis) {
   const EndAngles angles = angles_of(chain, basis);
-  const bool may_be_minus = std::any_of(chain.stations.begin(), chain.stations.end(), [](const model::Station& station) {
-    return station.herald != model::Herald::psi_plus;
-  });
+  const bool may_be_minus =
+      std::any_of(chain.stations.begin(), chain.stations.end(),
+                  [](const model::Station& station) { return station.herald != model::Herald::psi_plus; });
   // At 45 degrees, th -> -th is the exchange of two detectors; where they are alike the two corrections are the same.
   const bool alike = chain.right_end.detectors[model::plus] == chain.right_end.detectors[model::cross];
   if (basis == Basis::diagonal && may_be_minus && !alike) return table_with_exchanged_bits(field, chain, angles);

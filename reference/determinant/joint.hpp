@@ -1,6 +1,6 @@
 #pragma once
-// The determinant route's probabilities in either arithmetic: joint tables of the herald and the ends' clicks, the herald
-// alone, one stated pattern.
+// The determinant route's probabilities in either arithmetic: joint tables of the herald and the ends' clicks, the
+// herald alone, one stated pattern.
 
 #include "reference/arithmetic/field.hpp"
 #include "reference/model/chain.hpp"

@@ -19,7 +19,8 @@ struct PoissonTerm {
 };
 
 // One end's silent sets for "plus clicks, cross silent": {cross} counts positive, {plus, cross} negative.
-std::vector<EndBlock<Interval>> exclusive_plus(const Field<Interval>& field, const model::End& end, const model::Arm& arm) {
+std::vector<EndBlock<Interval>> exclusive_plus(const Field<Interval>& field, const model::End& end,
+                                               const model::Arm& arm) {
   std::vector blocks = {end_block(field, end, arm, cross_bit), end_block(field, end, arm, plus_bit | cross_bit)};
   blocks[1].dark = -blocks[1].dark;
   return blocks;
@@ -82,7 +83,8 @@ double largest_log2_radius(const std::vector<PoissonTerm>& terms) {
   double largest = -INFINITY;
   for (const PoissonTerm& term : terms) {
     const Interval radius = square_root(square(term.real) + square(term.imaginary));
-    largest = std::max(largest, radius.is_exactly_zero() ? -INFINITY : std::log2(mpfr_get_d(&radius.raw()->right, MPFR_RNDU)));
+    largest = std::max(largest,
+                       radius.is_exactly_zero() ? -INFINITY : std::log2(mpfr_get_d(&radius.raw()->right, MPFR_RNDU)));
   }
   return largest;
 }
@@ -146,8 +148,11 @@ AngularProfile determinant_profile(const model::Chain& chain, Precision bits) {
   ring.for_each_leaf(collector);
 
   const auto size = static_cast<std::size_t>(harmonics_needed(collector.terms(), bits)) + 1;
-  AngularProfile profile{std::vector<Interval>(size, field(0L)), std::vector<Interval>(size, field(0L)),
-                         {field(0L), field(0L), field(0L)}, field(0L), {}};
+  AngularProfile profile{std::vector<Interval>(size, field(0L)),
+                         std::vector<Interval>(size, field(0L)),
+                         {field(0L), field(0L), field(0L)},
+                         field(0L),
+                         {}};
   for (const PoissonTerm& term : collector.terms()) {
     profile.cosine[0] += term.weight;
     add_harmonics(profile, term, field);

@@ -14,12 +14,14 @@ Ring<Number>::Ring(const Field<Number>& field, const model::Chain& chain,
   }
   h_paths_ = v_paths_ = {source_matrix(field, field(chain.sources.front().pair_parameter))};
   for (std::size_t k = 0; k < chain.station_count(); ++k) {
-    stations_.push_back(station_terms(field, chain.stations[k], chain.right_arms[k], chain.left_arms[k + 1], patterns[k]));
+    stations_.push_back(
+        station_terms(field, chain.stations[k], chain.right_arms[k], chain.left_arms[k + 1], patterns[k]));
     extend_paths(stations_.back(), field(chain.sources[k + 1].pair_parameter));
   }
 }
 
-// H grows at its left (last matrix met), V at its right (first matrix met); on the V path the station is entered from L.
+// H grows at its left (last matrix met), V at its right (first matrix met); on the V path the station is entered from
+// L.
 template <class Number>
 void Ring<Number>::extend_paths(const StationTerms<Number>& station, const Number& lam_behind) {
   Scratch<Number> scratch(field_);

@@ -54,7 +54,8 @@ std::unique_ptr<Route> make_determinant_route(const Chain& chain) { return std::
 
 std::optional<std::string> determinant_refusal(const Chain& chain) {
   for (std::size_t k = 0; k < chain.sources.size(); ++k) {
-    if (chain.sources[k].kind != model::SourceKind::squeezed) return "an ideal-pair source (source " + std::to_string(k) + ")";
+    if (chain.sources[k].kind != model::SourceKind::squeezed)
+      return "an ideal-pair source (source " + std::to_string(k) + ")";
   }
   for (std::size_t k = 0; k < chain.station_count(); ++k) {
     if (any_resolving(chain.stations[k].detectors)) {

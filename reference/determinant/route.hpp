@@ -1,7 +1,7 @@
 #pragma once
-// The determinant route: every probability as a finite signed sum of no-click determinants. Exact without any cut-off for
-// squeezed sources and threshold detectors; the cost grows as the number of merged silent sets, 4^N where a station's
-// detectors are alike, up to 9^N where not.
+// The determinant route: every probability as a finite signed sum of no-click determinants. Exact without any cut-off
+// for squeezed sources and threshold detectors; the cost grows as the number of merged silent sets, 4^N where a
+// station's detectors are alike, up to 9^N where not.
 
 #include <memory>
 #include <optional>

@@ -19,7 +19,8 @@ class Accumulator {
     sums_.assign(left.size(), std::vector<Number>(right.size(), field(0L)));
     for (const EndBlock<Number>& l : left) {
       minus_twice_corners_.emplace_back();
-      for (const EndBlock<Number>& r : right) minus_twice_corners_.back().push_back(minus_twice_corner(field, l, r, angles));
+      for (const EndBlock<Number>& r : right)
+        minus_twice_corners_.back().push_back(minus_twice_corner(field, l, r, angles));
     }
   }
 
@@ -51,8 +52,8 @@ class Accumulator {
     return {a, b};
   }
   // -2 C_L C_R, the ends' share of -2 kappa.
-  static Number minus_twice_corner(const Field<Number>& field, const EndBlock<Number>& left, const EndBlock<Number>& right,
-                                   const AngleFactors<Number>& angles) {
+  static Number minus_twice_corner(const Field<Number>& field, const EndBlock<Number>& left,
+                                   const EndBlock<Number>& right, const AngleFactors<Number>& angles) {
     Number corner = field(-2L);
     multiply(corner, corner, left.half_difference);
     multiply(corner, corner, right.half_difference);

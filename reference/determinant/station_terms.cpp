@@ -12,8 +12,8 @@ using model::Ask;
 using model::Real;
 using model::Station;
 
-// Registering probabilities of the silent c and d detectors of one polarisation. Exchanging the two changes only the sign
-// of the off-diagonal, so they are kept in one order and the sign beside them.
+// Registering probabilities of the silent c and d detectors of one polarisation. Exchanging the two changes only the
+// sign of the off-diagonal, so they are kept in one order and the sign beside them.
 struct SilentPair {
   Real c, d;
   friend bool operator==(const SilentPair&, const SilentPair&) = default;
@@ -137,8 +137,9 @@ std::vector<WeightedPattern> weighted_outcomes(model::Herald herald, HeraldSum s
 }
 
 template <class Number>
-StationTerms<Number> station_terms(const Field<Number>& field, const Station& station, const model::Arm& right_arm_before,
-                                   const model::Arm& left_arm_behind, const std::vector<WeightedPattern>& patterns) {
+StationTerms<Number> station_terms(const Field<Number>& field, const Station& station,
+                                   const model::Arm& right_arm_before, const model::Arm& left_arm_behind,
+                                   const std::vector<WeightedPattern>& patterns) {
   const Expansion expansion = expand_all(station, patterns);
   const Inputs<Number> in{field, right_arm_before.transmittance, left_arm_behind.transmittance,
                           station.indistinguishability};
@@ -158,9 +159,9 @@ std::size_t count_station_terms(const Station& station, const std::vector<Weight
   return expand_all(station, patterns).terms.size();
 }
 
-template StationTerms<Interval> station_terms(const Field<Interval>&, const Station&, const model::Arm&, const model::Arm&,
-                                              const std::vector<WeightedPattern>&);
-template StationTerms<Rational> station_terms(const Field<Rational>&, const Station&, const model::Arm&, const model::Arm&,
-                                              const std::vector<WeightedPattern>&);
+template StationTerms<Interval> station_terms(const Field<Interval>&, const Station&, const model::Arm&,
+                                              const model::Arm&, const std::vector<WeightedPattern>&);
+template StationTerms<Rational> station_terms(const Field<Rational>&, const Station&, const model::Arm&,
+                                              const model::Arm&, const std::vector<WeightedPattern>&);
 
 }  // namespace heraldgauge::reference

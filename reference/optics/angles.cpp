@@ -35,12 +35,21 @@ std::optional<Rational> rational_cosine(const Rational& degrees) {
   const Rational angle = reduced(degrees);
   if (angle.get_den() != 1) return std::nullopt;
   switch (angle.get_num().get_si()) {
-    case 0: return Rational(1);
-    case 60: case 300: return Rational(1, 2);
-    case 90: case 270: return Rational(0);
-    case 120: case 240: return Rational(-1, 2);
-    case 180: return Rational(-1);
-    default: return std::nullopt;
+    case 0:
+      return Rational(1);
+    case 60:
+    case 300:
+      return Rational(1, 2);
+    case 90:
+    case 270:
+      return Rational(0);
+    case 120:
+    case 240:
+      return Rational(-1, 2);
+    case 180:
+      return Rational(-1);
+    default:
+      return std::nullopt;
   }
 }
 

@@ -31,7 +31,9 @@ Number no_dark_event(const Field<Number>& field, std::span<const model::Detector
   return factor;
 }
 
-template Interval no_dark_event(const Field<Interval>&, std::span<const model::Detector>, const model::Background&, unsigned);
-template Rational no_dark_event(const Field<Rational>&, std::span<const model::Detector>, const model::Background&, unsigned);
+template Interval no_dark_event(const Field<Interval>&, std::span<const model::Detector>, const model::Background&,
+                                unsigned);
+template Rational no_dark_event(const Field<Rational>&, std::span<const model::Detector>, const model::Background&,
+                                unsigned);
 
 }  // namespace heraldgauge::reference
