@@ -1,0 +1,32 @@
+#pragma once
+// Visits every number of one kind in a chain, for departures that change them all alike.
+
+#include "reference/model/chain.hpp"
+
+namespace heraldgauge::compare {
+
+template <class Edit>
+void for_each_detector(model::Chain& chain, Edit&& edit) {
+  for (model::Station& station : chain.stations) {
+    for (model::Detector& detector : station.detectors) edit(detector);
+  }
+  for (model::End* end : {&chain.left_end, &chain.right_end}) {
+    for (model::Detector& detector : end->detectors) edit(detector);
+  }
+}
+
+template <class Edit>
+void for_each_arm(model::Chain& chain, Edit&& edit) {
+  for (model::Arm& arm : chain.left_arms) edit(arm);
+  for (model::Arm& arm : chain.right_arms) edit(arm);
+}
+
+// Squeezed sources only: an ideal pair source has a probability, which these conventions leave alone.
+template <class Edit>
+void for_each_squeezed_source(model::Chain& chain, Edit&& edit) {
+  for (model::Source& source : chain.sources) {
+    if (source.kind == model::SourceKind::squeezed) edit(source);
+  }
+}
+
+}  // namespace heraldgauge::compare
