@@ -18,15 +18,15 @@ std::vector<CertifiedValue> certified_values_of(const Case& point, const std::ve
   request.quantities = quantities;
   request.pattern = point.pattern;
   request.digits = digits;
-  auto results = reference::enclose(point.chain, request);
+  const auto results = reference::enclose(point.chain, request);
   if (!results) return declined_certified(quantities, in_words(results.faults()));
   std::vector<CertifiedValue> values;
-  for (reference::Result& result : *results) {
+  for (const reference::Result& result : *results) {
     const bool undefined = result.status == reference::Status::undefined;
     const fast::Status status = result.enclosure ? fast::Status::computed
                                 : undefined      ? fast::Status::undefined
                                                  : fast::Status::declined;
-    values.push_back({result.quantity, status, std::move(result.reason), std::move(result.enclosure)});
+    values.push_back({result.quantity, status, result.reason, result.enclosure});
   }
   return values;
 }
