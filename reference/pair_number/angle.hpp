@@ -1,0 +1,21 @@
+#pragma once
+// The trigonometry of analysers at exactly known angles in degrees.
+
+#include "reference/arithmetic/interval.hpp"
+#include "reference/model/rational.hpp"
+
+namespace heraldgauge::reference::pair_number {
+
+// cos^2, sin^2 and cos sin of one angle. Exact where they are rational (multiples of 45 degrees; squares also at multiples
+// of 30 degrees), else to the given precision: the angle is reduced exactly before any conversion.
+struct SquaredDirection {
+  Interval cosine_squared;
+  Interval sine_squared;
+  Interval product;  // cos sin
+};
+SquaredDirection squared_direction(const model::Rational& degrees, Precision bits);
+
+// True exactly at multiples of 90 degrees, where an analyser keeps H and V apart.
+bool is_right_angle_multiple(const model::Rational& degrees);
+
+}  // namespace heraldgauge::reference::pair_number

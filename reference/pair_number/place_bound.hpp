@@ -1,0 +1,40 @@
+#pragma once
+// w(n, n'): a bound on the probability that a place answers as asked, given the pair numbers of the sources on both sides of
+// it, whatever the state of those photons. BOUNDS.md proves it.
+//
+// With r photon events required in all, eta the largest registering probability of the detectors that need one, tau = eta t
+// of either arm, and D_t the dark probability that completes t photon events (dark_weights.hpp, all accepted patterns added):
+//   w = min(1, sum_t D_t min(1, e_t)),  e_t = sum_i C(n, i) C(n', t-i) tau^i tau'^(t-i).
+
+#include <vector>
+
+#include "reference/pair_number/dark_weights.hpp"
+#include "reference/pair_number/end_operator.hpp"
+#include "reference/pair_number/matrix.hpp"
+#include "reference/pair_number/station_operator.hpp"
+
+namespace heraldgauge::reference::pair_number {
+
+class PlaceBound {
+ public:
+  PlaceBound(const StationPlace& station, Precision bits);
+  // An end has no second source: n' = 0.
+  PlaceBound(const EndPlace& end, const EndAsk& ask, Precision bits);
+
+  // r, the largest number of photon events that any accepted pattern needs.
+  long order() const { return static_cast<long>(dark_.size()) - 1; }
+  // w for n <= first_last, n' <= second_last.
+  Matrix table(long first_last, long second_last) const;
+
+ private:
+  void add_pattern(const DetectorGroup& group);
+  // C(n, i) tau^i, n = 0..last, i = 0..r.
+  Matrix thinned(const Interval& tau, long last) const;
+
+  Precision bits_;
+  std::vector<Interval> dark_;  // D_t
+  Interval eta_;
+  Interval first_transmittance_, second_transmittance_;
+};
+
+}  // namespace heraldgauge::reference::pair_number
