@@ -1,13 +1,13 @@
 #pragma once
-// The trigonometry of analysers at exactly known angles in degrees.
+// The direction of an analyser at an exactly known angle in degrees.
 
 #include "reference/arithmetic/interval.hpp"
 #include "reference/model/rational.hpp"
 
 namespace heraldgauge::reference::pair_number {
 
-// cos^2, sin^2 and cos sin of one angle. Exact where they are rational (multiples of 45 degrees; squares also at multiples
-// of 30 degrees), else to the given precision: the angle is reduced exactly before any conversion.
+// cos^2, sin^2 and cos sin of one angle, exact where they are rational. The squares keep their relative precision where
+// they are small.
 struct SquaredDirection {
   Interval cosine_squared;
   Interval sine_squared;

@@ -50,7 +50,8 @@ double product_count(const model::Station& station) {
 double element_cost(long first_cut, long second_cut, long sectors) {
   double elements = 0;
   for (long sector = 0; sector <= std::max(sectors, 1L); ++sector) {
-    elements += static_cast<double>(std::max(first_cut - sector + 1, 0L)) * static_cast<double>(std::max(second_cut - sector + 1, 0L));
+    elements += static_cast<double>(std::max(first_cut - sector + 1, 0L)) *
+                static_cast<double>(std::max(second_cut - sector + 1, 0L));
   }
   return 24 * elements;
 }

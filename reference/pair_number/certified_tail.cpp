@@ -24,8 +24,8 @@ EndAsk loosest(const std::vector<EndAsk>& asks) { return asks.size() == 1 ? asks
 
 }  // namespace
 
-CertifiedTail certified_tail(const HeraldedChain& link, const std::vector<EndAsk>& left, const std::vector<EndAsk>& right,
-                             double log2_tail) {
+CertifiedTail certified_tail(const HeraldedChain& link, const std::vector<EndAsk>& left,
+                             const std::vector<EndAsk>& right, double log2_tail) {
   std::vector<long> cutoffs = estimated_cutoffs(link, loosest(left), loosest(right), log2_tail).pairs;
   for (int attempt = 1;; ++attempt) {
     CertifiedTail tail{cutoffs, tail_by_operators(link, cutoffs, left, right, tail_bits), Interval(tail_bits)};

@@ -29,12 +29,13 @@ CountAlgebra::Multiplier CountAlgebra::multiplier(const Polynomial& factor) cons
   Multiplier result;
   for (const Monomial& monomial : factor) {
     if (monomial.coefficient.is_exactly_zero()) continue;
-    Multiplier::Term term{monomial.coefficient, monomial.coefficient.lower() == 1 && monomial.coefficient.upper() == 1, {}};
+    Multiplier::Term term{
+        monomial.coefficient, monomial.coefficient.lower() == 1 && monomial.coefficient.upper() == 1, {}};
     for (long first = 0; first < first_; ++first) {
       for (long second = 0; second < second_; ++second) {
         for (long harmonic = -harmonics_; harmonic <= harmonics_; ++harmonic) {
-          term.targets.push_back(place({first + monomial.powers[0], second + monomial.powers[1]},
-                                       harmonic + monomial.harmonic));
+          term.targets.push_back(
+              place({first + monomial.powers[0], second + monomial.powers[1]}, harmonic + monomial.harmonic));
         }
       }
     }

@@ -1,6 +1,6 @@
 #pragma once
-// Numbers that count photons. A place's operator with its detectors' photons weighted by z_1, z_2 is a polynomial in them;
-// the question put to a detector says modulo what that polynomial is needed:
+// Numbers that count photons. A place's operator with its detectors' photons weighted by z_1, z_2 is a polynomial in
+// them; the question put to a detector says modulo what that polynomial is needed:
 //   silent, or not looked at: z is 0 or 1, no variable is left;
 //   at least one photon: value(1) - value(0), the coefficient of z modulo z^2 = z;
 //   exactly r photons: the coefficient of z^r, modulo z^(r+1) = 0.

@@ -58,7 +58,8 @@ Interval total(const std::vector<Interval>& values) {
 }
 
 // log2 of the weight that everything on one side lends to n = 0..last pairs of a source: sum_m w(m, n) shells(m).
-std::vector<double> lent_weights(const PlaceBound& place, const std::vector<Interval>& shells, long last, bool from_left) {
+std::vector<double> lent_weights(const PlaceBound& place, const std::vector<Interval>& shells, long last,
+                                 bool from_left) {
   const long others = static_cast<long>(shells.size()) - 1;
   const Matrix w = from_left ? place.table(others, last) : place.table(last, others);
   std::vector<double> weights;
@@ -94,9 +95,10 @@ std::vector<PlaceBound> all_places(const HeraldedChain& link, const EndAsk& left
   return places;
 }
 
-// The least cut-off of source k that leaves at most the share beyond it, all other sources within their provisional ones.
-long chosen_cutoff(const HeraldedChain& link, const std::vector<PlaceBound>& places, const Surroundings& around, std::size_t k,
-                   double log2_share) {
+// The least cut-off of source k that leaves at most the share beyond it, all other sources within their provisional
+// ones.
+long chosen_cutoff(const HeraldedChain& link, const std::vector<PlaceBound>& places, const Surroundings& around,
+                   std::size_t k, double log2_share) {
   const model::Source& source = link.chain.sources[k];
   if (const std::optional<long> most = most_pairs(source)) return *most;
   const std::size_t last_source = link.source_count() - 1;
@@ -143,11 +145,13 @@ Cutoffs estimated_cutoffs(const HeraldedChain& link, const EndAsk& left, const E
     const bool settled = herald == before || herald - before < 0.25;
     if (settled || covers(provisional, chosen)) return {chosen, herald};
     before = herald;
-    for (std::size_t k = 0; k < chosen.size(); ++k) provisional[k] = std::min(size, std::max(chosen[k], provisional[k]));
+    for (std::size_t k = 0; k < chosen.size(); ++k)
+      provisional[k] = std::min(size, std::max(chosen[k], provisional[k]));
   }
 }
 
-std::vector<long> raised_cutoffs(const HeraldedChain& link, std::vector<long> pairs, double log2_reached, double log2_tail) {
+std::vector<long> raised_cutoffs(const HeraldedChain& link, std::vector<long> pairs, double log2_reached,
+                                 double log2_tail) {
   for (std::size_t k = 0; k < pairs.size(); ++k) {
     const model::Source& source = link.chain.sources[k];
     if (most_pairs(source)) continue;

@@ -1,6 +1,6 @@
 #pragma once
-// How many pairs each source keeps. The choice rests on estimates and needs no proof: whatever is chosen, the tail bound is
-// computed afterwards and holds.
+// How many pairs each source keeps. The choice rests on estimates and needs no proof: whatever is chosen, the tail
+// bound is computed afterwards and holds.
 
 #include <vector>
 
@@ -19,6 +19,7 @@ Cutoffs estimated_cutoffs(const HeraldedChain& link, const EndAsk& left, const E
 
 // The same cut-offs raised where a computed tail of 2^log2_reached missed the aim: each by as many pairs as the missing
 // factor is worth in powers of its pair parameter, at least one.
-std::vector<long> raised_cutoffs(const HeraldedChain& link, std::vector<long> pairs, double log2_reached, double log2_tail);
+std::vector<long> raised_cutoffs(const HeraldedChain& link, std::vector<long> pairs, double log2_reached,
+                                 double log2_tail);
 
 }  // namespace heraldgauge::reference::pair_number

@@ -17,10 +17,14 @@ struct DarkAsk {
 
 DarkAsk dark_ask(const Ask& ask, long order) {
   switch (ask.kind) {
-    case Ask::Kind::not_looked_at: return {DarkAsk::Kind::anything};
-    case Ask::Kind::silent: return {DarkAsk::Kind::silent};
-    case Ask::Kind::clicks: return {order == 0 ? DarkAsk::Kind::fires : DarkAsk::Kind::anything};
-    case Ask::Kind::counts: break;
+    case Ask::Kind::not_looked_at:
+      return {DarkAsk::Kind::anything};
+    case Ask::Kind::silent:
+      return {DarkAsk::Kind::silent};
+    case Ask::Kind::clicks:
+      return {order == 0 ? DarkAsk::Kind::fires : DarkAsk::Kind::anything};
+    case Ask::Kind::counts:
+      break;
   }
   return {DarkAsk::Kind::exactly, ask.photons - order};
 }
@@ -36,10 +40,14 @@ Interval poisson(const Detector& detector, long events, Precision bits) {
 
 Interval independent_probability(const Detector& detector, const DarkAsk& ask, Precision bits) {
   switch (ask.kind) {
-    case DarkAsk::Kind::anything: return {1L, bits};
-    case DarkAsk::Kind::silent: return enclose(Real(1) - detector.dark_probability, bits);
-    case DarkAsk::Kind::fires: return enclose(detector.dark_probability, bits);
-    case DarkAsk::Kind::exactly: break;
+    case DarkAsk::Kind::anything:
+      return {1L, bits};
+    case DarkAsk::Kind::silent:
+      return enclose(Real(1) - detector.dark_probability, bits);
+    case DarkAsk::Kind::fires:
+      return enclose(detector.dark_probability, bits);
+    case DarkAsk::Kind::exactly:
+      break;
   }
   return poisson(detector, ask.events, bits);
 }

@@ -94,7 +94,8 @@ void scale_by_factorials(Interval& element, Side side, long sector, long a, long
 }
 
 std::vector<DarkWeight> weights_of(const EndPlace& place, const EndAsk& ask, Precision bits) {
-  const DetectorGroup group{{place.end.detectors[0], place.end.detectors[1]}, {ask[0], ask[1]}, place.end.background, 2};
+  const DetectorGroup group{
+      {place.end.detectors[0], place.end.detectors[1]}, {ask[0], ask[1]}, place.end.background, 2};
   return dark_weights(group, bits);
 }
 
@@ -107,8 +108,8 @@ SectorStack end_elements(const EndPlace& place, Side side, const EndAsk& ask, co
   const std::vector<DarkWeight> weights = weights_of(place, ask, bits);
   const CountAlgebra algebra({count_variable(ask[0]), count_variable(ask[1])}, 0, bits);
   Interval scratch(bits);
-  for_each_gamma_element(algebra, fixed_modes(place, ask, squared_direction(degrees, bits), bits), {cut, cut, cut, sectors},
-                         [&](long sector, long a, long b, const Interval* element) {
+  for_each_gamma_element(algebra, fixed_modes(place, ask, squared_direction(degrees, bits), bits),
+                         {cut, cut, cut, sectors}, [&](long sector, long a, long b, const Interval* element) {
                            Interval& target = stack[static_cast<std::size_t>(sector)](a, b);
                            for (std::size_t q = 0; q < weights.size(); ++q) {
                              Interval::multiply(scratch, weights[q].weight, element[q]);
@@ -121,7 +122,7 @@ SectorStack end_elements(const EndPlace& place, Side side, const EndAsk& ask, co
 
 bool keeps_polarisations(const EndPlace& place, const EndAsk& ask, const Rational& degrees) {
   const bool blind = place.transmittance.is_zero() || (!is_looked_at(ask[0]) && !is_looked_at(ask[1]));
-  const bool absorbing_alike = ask[0] == Ask{Ask::Kind::silent} && ask[1] == ask[0] && 
+  const bool absorbing_alike = ask[0] == Ask{Ask::Kind::silent} && ask[1] == ask[0] &&
                                absorbed(place, model::plus) == absorbed(place, model::cross);
   return is_right_angle_multiple(degrees) || blind || absorbing_alike;
 }

@@ -1,9 +1,9 @@
 #pragma once
 // The operator of a measured end, sector by sector.
 //
-// Modes H and V behind the transmittance t, analyser at angle th. With u_j = 1 - eta_j t for a detector that is looked at
-// and 1 for one that is not: a = u_plus cos^2 + u_cross sin^2, b = u_plus sin^2 + u_cross cos^2, x = (u_plus - u_cross)
-// cos sin, and each looked-at eta_j t comes back with its variable z_j.
+// Modes H and V behind the transmittance t, analyser at angle th. With u_j = 1 - eta_j t for a detector that is looked
+// at and 1 for one that is not: a = u_plus cos^2 + u_cross sin^2, b = u_plus sin^2 + u_cross cos^2, x = (u_plus -
+// u_cross) cos sin, and each looked-at eta_j t comes back with its variable z_j.
 
 #include <array>
 #include <vector>
@@ -32,8 +32,8 @@ using SectorStack = std::vector<Matrix>;
 SectorStack end_elements(const EndPlace& place, Side side, const EndAsk& ask, const model::Rational& degrees, long cut,
                          long sectors, Precision bits);
 
-// True where H and V are certainly kept apart, so that only Delta = 0 is left: analyser at a multiple of 90 degrees, both
-// detectors not looked at, or both alike in what they absorb.
+// True where H and V are certainly kept apart, so that only Delta = 0 is left: analyser at a multiple of 90 degrees,
+// both detectors not looked at, or both alike in what they absorb.
 bool keeps_polarisations(const EndPlace& place, const EndAsk& ask, const model::Rational& degrees);
 
 // The right end's elements at a variable angle, as in end_elements: each is

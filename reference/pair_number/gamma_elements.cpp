@@ -27,12 +27,8 @@ class Recurrence {
   }
 
   long last_sector(long alpha) const { return std::min(last_sector_, std::min(extent_.first, extent_.total) - alpha); }
-  long last_beta(long sector, long alpha) const {
-    return std::min(extent_.second, extent_.total - alpha) - sector;
-  }
-  Interval* at(long sector, long beta) {
-    return rows_[static_cast<std::size_t>(sector)].data() + beta * size_;
-  }
+  long last_beta(long sector, long alpha) const { return std::min(extent_.second, extent_.total - alpha) - sector; }
+  Interval* at(long sector, long beta) { return rows_[static_cast<std::size_t>(sector)].data() + beta * size_; }
 
   void advance_to(long alpha) {
     for (long beta = last_beta(0, alpha); beta >= 0; --beta) diagonal(alpha, beta);

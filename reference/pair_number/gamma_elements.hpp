@@ -30,7 +30,8 @@ struct Extent {
   long sectors;
 };
 
-// Calls visit(D, alpha, beta, element) once for each, alpha rising; the element's coefficients are valid during the call.
+// Calls visit(D, alpha, beta, element) once for each, alpha rising; the element's coefficients are valid during the
+// call.
 using ElementVisitor = std::function<void(long sector, long alpha, long beta, const Interval* element)>;
 void for_each_gamma_element(const CountAlgebra& algebra, const ModePair& modes, const Extent& extent,
                             const ElementVisitor& visit);

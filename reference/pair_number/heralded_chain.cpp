@@ -10,7 +10,8 @@ StationPlace HeraldedChain::station(std::size_t k) const {
 
 HeraldedChain heralded(const model::Chain& chain) {
   HeraldedChain link{chain, {}};
-  for (const model::Station& station : chain.stations) link.outcomes.push_back(model::accepted_outcomes(station.herald));
+  for (const model::Station& station : chain.stations)
+    link.outcomes.push_back(model::accepted_outcomes(station.herald));
   return link;
 }
 

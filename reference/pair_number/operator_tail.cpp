@@ -9,8 +9,8 @@
 namespace heraldgauge::reference::pair_number {
 namespace {
 
-// The weights of one source: of a state within the cut-off, and of each pair number up to the last, which stands for all
-// beyond it.
+// The weights of one source: of a state within the cut-off, and of each pair number up to the last, which stands for
+// all beyond it.
 struct SourceShells {
   long cutoff;
   std::vector<Interval> state_weight;  // n = 0..cutoff
@@ -18,8 +18,8 @@ struct SourceShells {
   long last() const { return static_cast<long>(probability.size()) - 1; }
 };
 
-// Configurations up to the present source: X with no source beyond its cut-off, Y with an earlier one beyond and the present
-// one within, Z(n) with the present one beyond.
+// Configurations up to the present source: X with no source beyond its cut-off, Y with an earlier one beyond and the
+// present one within, Z(n) with the present one beyond.
 struct Configurations {
   Matrix x, y;
   std::vector<Interval> z;  // n = cutoff+1..M
@@ -35,8 +35,8 @@ std::vector<Interval> shell_sums(const Matrix& x, const Matrix& y) {
 }
 
 Configurations at_first_source(const SourceShells& source, const Matrix& w, Precision bits) {
-  Configurations state{Matrix(source.cutoff + 1, source.cutoff + 1, bits), Matrix(source.cutoff + 1, source.cutoff + 1, bits),
-                       {}};
+  Configurations state{
+      Matrix(source.cutoff + 1, source.cutoff + 1, bits), Matrix(source.cutoff + 1, source.cutoff + 1, bits), {}};
   for (long a = 0; a <= source.cutoff; ++a) {
     for (long b = 0; a + b <= source.cutoff; ++b) state.x(a, b) = w(a + b, 0);
   }
@@ -56,8 +56,8 @@ Interval through(const Matrix& w, const std::vector<Interval>& z, long first_row
 
 Configurations through_station(const std::vector<Product>& products, const Matrix& w, const SourceShells& before,
                                const SourceShells& behind, const Configurations& state, Precision bits) {
-  Configurations next{Matrix(behind.cutoff + 1, behind.cutoff + 1, bits), Matrix(behind.cutoff + 1, behind.cutoff + 1, bits),
-                      {}};
+  Configurations next{
+      Matrix(behind.cutoff + 1, behind.cutoff + 1, bits), Matrix(behind.cutoff + 1, behind.cutoff + 1, bits), {}};
   for (const Product& product : products) {
     accumulate(next.x, product, state.x);
     accumulate(next.y, product, state.y);

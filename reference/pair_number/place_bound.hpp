@@ -1,9 +1,10 @@
 #pragma once
-// w(n, n'): a bound on the probability that a place answers as asked, given the pair numbers of the sources on both sides of
-// it, whatever the state of those photons. BOUNDS.md proves it.
+// w(n, n'): a bound on the probability that a place answers as asked, given the pair numbers of the sources on both
+// sides of it, whatever the state of those photons. BOUNDS.md proves it.
 //
-// With r photon events required in all, eta the largest registering probability of the detectors that need one, tau = eta t
-// of either arm, and D_t the dark probability that completes t photon events (dark_weights.hpp, all accepted patterns added):
+// With r photon events required in all, eta the largest registering probability of the detectors that need one, tau =
+// eta t of either arm, and D_t the dark probability that completes t photon events (dark_weights.hpp, all accepted
+// patterns added):
 //   w = min(1, sum_t D_t min(1, e_t)),  e_t = sum_i C(n, i) C(n', t-i) tau^i tau'^(t-i).
 
 #include <vector>

@@ -2,6 +2,7 @@
 
 #include <algorithm>
 
+#include "reference/optics/angles.hpp"
 #include "reference/pair_number/certified_tail.hpp"
 #include "reference/pair_number/profile.hpp"
 #include "reference/pair_number/transfer.hpp"
@@ -20,29 +21,24 @@ std::vector<EndAsk> end_patterns() {
   return {{silent, silent}, {silent, clicks}, {clicks, silent}, {clicks, clicks}};
 }
 
-struct Angles {
-  Rational left, right;
-};
-
-// Without a station only the difference of the two angles matters.
-Angles angles_of(const model::Chain& chain, Basis basis) {
-  Angles angles{0, 0};
-  if (basis == Basis::diagonal) angles = {45, 45};
-  if (basis == Basis::analyser) angles = {chain.left_end.analyser_deg, chain.right_end.analyser_deg};
-  return chain.station_count() == 0 ? Angles{0, angles.right - angles.left} : angles;
+EndAngles angles_of(const model::Chain& chain, Basis basis) {
+  if (basis == Basis::rectilinear) return {0, 0};
+  if (basis == Basis::diagonal) return effective_angles(chain, {45, 45});
+  return effective_angles(chain, {chain.left_end.analyser_deg, chain.right_end.analyser_deg});
 }
 
 // Contracts the stations once for all left patterns, and closes with every right pattern.
 class EndContraction {
  public:
-  EndContraction(const HeraldedChain& link, const Angles& angles, const std::vector<EndAsk>& left,
+  EndContraction(const HeraldedChain& link, const EndAngles& angles, const std::vector<EndAsk>& left,
                  const std::vector<EndAsk>& right, const std::vector<long>& cutoffs, Precision bits)
       : link_(link), angles_(angles), left_(left), right_(right), cutoffs_(cutoffs), bits_(bits) {
     const auto keeps = [](const EndPlace& place, const std::vector<EndAsk>& asks, const Rational& degrees) {
       return std::all_of(asks.begin(), asks.end(),
                          [&](const EndAsk& ask) { return keeps_polarisations(place, ask, degrees); });
     };
-    const bool only_zero = keeps(link.left_end(), left, angles.left) || keeps(link.right_end(), right, angles.right);
+    const bool only_zero =
+        keeps(link.left_end(), left, angles.left_deg) || keeps(link.right_end(), right, angles.right_deg);
     sectors_ = only_zero ? 0 : sectors_within(cutoffs);
   }
 
@@ -67,7 +63,7 @@ class EndContraction {
 
  private:
   SectorStack left_elements(const EndAsk& ask) const {
-    return end_elements(link_.left_end(), Side::left, ask, angles_.left, cutoffs_.front(), sectors_, bits_);
+    return end_elements(link_.left_end(), Side::left, ask, angles_.left_deg, cutoffs_.front(), sectors_, bits_);
   }
   SectorStack zero_like(const SectorStack& stack) const {
     SectorStack zeros;
@@ -78,14 +74,14 @@ class EndContraction {
     std::vector<std::vector<Interval>> table(states.size());
     for (const EndAsk& ask : right_) {
       const SectorStack end =
-          end_elements(link_.right_end(), Side::right, ask, angles_.right, cutoffs_.back(), sectors_, bits_);
+          end_elements(link_.right_end(), Side::right, ask, angles_.right_deg, cutoffs_.back(), sectors_, bits_);
       for (std::size_t i = 0; i < states.size(); ++i) table[i].push_back(close_chain(states[i], end, bits_));
     }
     return table;
   }
 
   const HeraldedChain& link_;
-  Angles angles_;
+  EndAngles angles_;
   const std::vector<EndAsk>& left_;
   const std::vector<EndAsk>& right_;
   const std::vector<long>& cutoffs_;
@@ -112,14 +108,13 @@ class PairNumberRoute : public Route {
   Bounded<EndTable<Interval>> ends(Basis basis, const Accuracy& accuracy) const override {
     const std::vector<EndAsk> patterns = end_patterns();
     const CertifiedTail tail = certified_tail(heralded_, patterns, patterns, accuracy.log2_tail);
-    const EndContraction contraction(heralded_, angles_of(chain_, basis), patterns, patterns, tail.cutoffs, accuracy.bits);
+    const EndContraction contraction(heralded_, angles_of(chain_, basis), patterns, patterns, tail.cutoffs,
+                                     accuracy.bits);
     const auto table = exchanges_bits(basis) ? with_exchanged_bits(contraction.by_parity()) : contraction.corrected();
     return {raised_table(table, tail.bound), tail.cutoffs, tail.largest};
   }
 
-  std::unique_ptr<AngularProfile> profile(const Accuracy& accuracy) const override {
-    return make_profile(heralded_, accuracy);
-  }
+  AngularProfile profile(const Accuracy& accuracy) const override { return pair_number_profile(heralded_, accuracy); }
 
  private:
   Bounded<Interval> single(const HeraldedChain& link, const EndAsk& left, const EndAsk& right,
@@ -127,7 +122,8 @@ class PairNumberRoute : public Route {
     const CertifiedTail tail = certified_tail(link, {left}, {right}, accuracy.log2_tail);
     const std::vector<EndAsk> lefts{left};
     const std::vector<EndAsk> rights{right};
-    const EndContraction contraction(link, angles_of(chain_, Basis::analyser), lefts, rights, tail.cutoffs, accuracy.bits);
+    const EndContraction contraction(link, angles_of(chain_, Basis::analyser), lefts, rights, tail.cutoffs,
+                                     accuracy.bits);
     return {raised(contraction.corrected()[0][0], tail.largest), tail.cutoffs, tail.largest};
   }
 

@@ -1,11 +1,12 @@
 #pragma once
 // The pair-number route: the chain as a product of transfer matrices over the numbers of photon pairs, cut off where a
-// proven bound on what is left out allows it. It shares no formula with the determinant route. It serves what that route
-// does, and number-resolving detectors and ideal pairs besides, at a cost that is linear in the number of stations.
+// proven bound on what is left out allows it. It shares no formula with the determinant route. It serves what that
+// route does, and number-resolving detectors and ideal pairs besides, at a cost that is linear in the number of
+// stations.
 //
-// Every result is [kept, kept + tail], with all pair numbers up to the cut-offs kept and every operation rounded outward.
-// BOUNDS.md states and proves the bounds. A number-resolving detector clicks where it registers at least one photon or
-// dark event.
+// Every result is [kept, kept + tail], with all pair numbers up to the cut-offs kept and every operation rounded
+// outward. BOUNDS.md states and proves the bounds. A number-resolving detector clicks where it registers at least one
+// photon or dark event.
 
 #include <memory>
 #include <optional>
@@ -29,8 +30,8 @@ std::unique_ptr<Route> make_pair_number_route(const model::Chain& chain);
 // degrees, N > 0. herald() costs about a quarter of the smaller figure. An estimate within a factor of about 2.
 double pair_number_cost(const model::Chain& chain, const Accuracy& accuracy, bool needs_all_delta);
 
-// log2 of the herald probability, roughly (a few tenths where sources are weak, never for a certificate): what log2_tail may
-// be aimed at. -infinity where no herald can occur.
+// log2 of the herald probability, roughly (a few tenths where sources are weak, never for a certificate): what
+// log2_tail may be aimed at. -infinity where no herald can occur.
 double pair_number_log2_herald(const model::Chain& chain);
 
 }  // namespace heraldgauge::reference

@@ -18,7 +18,8 @@ ModePair station_modes(const PolarisationAsk& ask, const StationPlace& place, Pr
     if (is_looked_at(ask.asks[j])) half_eta[j] = half * ask.detectors[j].registering_probability();
   }
   const Interval coupling = enclose(
-      Real::square_root(place.first_transmittance * place.second_transmittance * place.station.indistinguishability), bits);
+      Real::square_root(place.first_transmittance * place.second_transmittance * place.station.indistinguishability),
+      bits);
   const auto enclosed = [bits](const Real& value) { return enclose(value, bits); };
   const Real sum = half_eta[0] + half_eta[1];
   ModePair modes;

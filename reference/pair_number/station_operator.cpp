@@ -47,7 +47,8 @@ bool operator==(const StationPlace& a, const StationPlace& b) {
   const auto same_outcomes = [&] {
     if (a.outcomes.size() != b.outcomes.size()) return false;
     for (std::size_t i = 0; i < a.outcomes.size(); ++i) {
-      if (a.outcomes[i].detectors != b.outcomes[i].detectors || a.outcomes[i].minus != b.outcomes[i].minus) return false;
+      if (a.outcomes[i].detectors != b.outcomes[i].detectors || a.outcomes[i].minus != b.outcomes[i].minus)
+        return false;
     }
     return true;
   };
@@ -55,7 +56,8 @@ bool operator==(const StationPlace& a, const StationPlace& b) {
          a.second_transmittance == b.second_transmittance && same_outcomes();
 }
 
-StationOperator::StationOperator(const StationPlace& place, long first_cut, long second_cut, long sectors, Precision bits)
+StationOperator::StationOperator(const StationPlace& place, long first_cut, long second_cut, long sectors,
+                                 Precision bits)
     : place_(place),
       extent_{first_cut, second_cut, first_cut + second_cut, sectors},
       bits_(bits),
@@ -78,13 +80,15 @@ void StationOperator::add_folded_terms(const AcceptedOutcome& outcome) {
 void StationOperator::add_background_terms(const AcceptedOutcome& outcome) {
   const PolarisationAsk horizontal = polarisation_ask(place_, outcome, horizontal_detectors);
   const PolarisationAsk vertical = polarisation_ask(place_, outcome, vertical_detectors);
-  const DetectorGroup group{{horizontal.detectors[0], horizontal.detectors[1], vertical.detectors[0], vertical.detectors[1]},
-                            {horizontal.asks[0], horizontal.asks[1], vertical.asks[0], vertical.asks[1]},
-                            place_.station.background,
-                            4};
+  const DetectorGroup group{
+      {horizontal.detectors[0], horizontal.detectors[1], vertical.detectors[0], vertical.detectors[1]},
+      {horizontal.asks[0], horizontal.asks[1], vertical.asks[0], vertical.asks[1]},
+      place_.station.background,
+      4};
   for (const DarkWeight& weight : dark_weights(group, bits_)) {
     terms_.push_back({find_part(horizontal_, horizontal, {weight.orders[0], weight.orders[1]}),
-                      find_part(vertical_, vertical, {weight.orders[2], weight.orders[3]}), weight.weight, outcome.minus});
+                      find_part(vertical_, vertical, {weight.orders[2], weight.orders[3]}), weight.weight,
+                      outcome.minus});
   }
 }
 
@@ -146,8 +150,8 @@ std::vector<Product> StationOperator::products(long sector, Outcomes which) cons
     if (which != Outcomes::corrected && term.minus != (which == Outcomes::minus_only)) continue;
     const bool corrected = which == Outcomes::corrected && term.minus;
     const bool negative = odd && (corrected ^ term.horizontal.exchanged ^ term.vertical.exchanged);
-    const auto place = sums.try_emplace({term.horizontal.block, term.horizontal.order},
-                                        extent_.first - sector + 1, extent_.second - sector + 1, bits_);
+    const auto place = sums.try_emplace({term.horizontal.block, term.horizontal.order}, extent_.first - sector + 1,
+                                        extent_.second - sector + 1, bits_);
     add_vertical(place.first->second, term, sector, negative);
   }
   std::vector<Product> products;

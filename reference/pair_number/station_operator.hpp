@@ -1,10 +1,10 @@
 #pragma once
 // The operator of one station, sector by sector, as a sum of products (H part) x (V part).
 //
-// In the sector Delta = D >= 0 the H part takes the numbers (alpha + D, beta) of the two arms to (alpha, beta + D), alpha on
-// the right arm of the source before, beta on the left arm of the source behind, and the V part the other way round; both
-// are the symmetric g_D(alpha, beta) of gamma_elements.hpp, without its square roots, which cancel between neighbouring
-// places (transfer.hpp).
+// In the sector Delta = D >= 0 the H part takes the numbers (alpha + D, beta) of the two arms to (alpha, beta + D),
+// alpha on the right arm of the source before, beta on the left arm of the source behind, and the V part the other way
+// round; both are the symmetric g_D(alpha, beta) of gamma_elements.hpp, without its square roots, which cancel between
+// neighbouring places (transfer.hpp).
 
 #include <vector>
 
@@ -55,7 +55,8 @@ class StationOperator {
   using Sectors = std::vector<Matrix>;
   struct Block {
     PolarisationAsk ask;
-    std::vector<Sectors> orders;  // photon operators by order of (c, d), d fastest; one operator where darks are folded in
+    std::vector<Sectors>
+        orders;  // photon operators by order of (c, d), d fastest; one operator where darks are folded in
   };
   struct Part {
     std::size_t block;

@@ -25,8 +25,8 @@ std::vector<PlaceBound> all_places(const HeraldedChain& link, const EndAsk& left
   return places;
 }
 
-// The scalar chain of bound 2: for every n of the present source, the weight with no source beyond its cut-off so far, and
-// with at least one.
+// The scalar chain of bound 2: for every n of the present source, the weight with no source beyond its cut-off so far,
+// and with at least one.
 struct Scalars {
   std::vector<Interval> within, beyond;
 };

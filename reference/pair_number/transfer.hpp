@@ -1,6 +1,7 @@
 #pragma once
-// The chain as a product of transfer matrices. A state holds, for each sector D, X_D(a, b): everything to the left of and
-// including a source's weights, with the H numbers of that source (a + D, a) and its V numbers (b, b + D), in either order.
+// The chain as a product of transfer matrices. A state holds, for each sector D, X_D(a, b): everything to the left of
+// and including a source's weights, with the H numbers of that source (a + D, a) and its V numbers (b, b + D), in
+// either order.
 //   X_0 = weight_0(n) A_D(a, b),  n = a + b + D <= cut of source 0,
 //   X_k(c, d) = weight_k(n) sum over products, a, b of H_D(a, c) X_{k-1}(a, b) V_D(b, d),
 //   P = sum over D of (2 - [D = 0]) sum_{a,b} X_N(a, b) B_D(a, b):
@@ -24,8 +25,8 @@ void accumulate(Matrix& out, const Product& product, const Matrix& in);
 // Whether psi- is corrected, or strings of outcomes with an even and an odd number of psi- are kept apart.
 enum class Strings { corrected, by_parity };
 
-// Takes states from the first source (weights not yet applied) to the last (weights applied). By parity, the states come in
-// pairs (even, odd).
+// Takes states from the first source (weights not yet applied) to the last (weights applied). By parity, the states
+// come in pairs (even, odd).
 std::vector<SectorStack> contract_stations(const HeraldedChain& link, const std::vector<long>& cutoffs, Strings strings,
                                            std::vector<SectorStack> states, Precision bits);
 
