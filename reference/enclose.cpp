@@ -133,12 +133,10 @@ class Certifier {
     }
   }
 
-  // The herald alone is cheap and shows how much the signed sum cancels, or how small a tail must be.
+  // The herald alone is cheap and shows how much the signed sum of determinants cancels.
   void prepare_tables() {
-    const double asked_bits = bits_per_digit * (request_.digits + 1);
-    tables_.emplace(chain_, make_route(route_, chain_),
-                    Accuracy{static_cast<Precision>(asked_bits) + first_guard_bits, -asked_bits - spare_bits});
-    if (chain_.station_count() == 0) return;
+    tables_.emplace(chain_, make_route(route_, chain_), aimed_accuracy(chain_, request_.digits));
+    if (chain_.station_count() == 0 || route_ != RouteName::determinant) return;
     tables_->begin_value();
     const auto missing = missing_bits(tables_->herald(), std::nullopt, request_.digits);
     if (missing && *missing > 0) tables_->improve(improved(missing));
