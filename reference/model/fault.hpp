@@ -41,6 +41,7 @@ class Expected {
   const T& value() const { return std::get<0>(content_); }
   T& value() { return std::get<0>(content_); }
   const T& operator*() const { return value(); }
+  T& operator*() { return value(); }
   const T* operator->() const { return &value(); }
   const Faults& faults() const { return std::get<1>(content_); }
 

@@ -27,12 +27,19 @@ struct Setting {
   Location location;
 };
 
-// One swept key or address with its points in order. Linear points are exact rationals; logarithmic points are the
-// nearest binary64 numbers.
+// One swept key or address with its points in order: values one by one, or a spacing between two ends. Linear points
+// are exact rationals; logarithmic points are the binary64 numbers nearest to the exact geometric points.
 struct Sweep {
+  enum class Spacing { listed, linear, logarithmic };
   std::string key;
-  std::vector<Value> values;
+  Spacing spacing = Spacing::listed;
+  std::vector<Value> values;  // listed
+  Rational from, to;          // linear and logarithmic
+  std::uint64_t points = 0;   // linear and logarithmic: at least 2
   Location location;
+
+  std::uint64_t size() const;
+  Value value(std::uint64_t index) const;  // requires index < size()
 };
 
 // One `--set KEY=VALUE`: VALUE is a TOML value, a bare word counts as a string.
@@ -42,6 +49,7 @@ struct Assignment {
 };
 
 struct Scenario {
+  std::string source;  // the file's name, for messages
   std::string title;
   InputMeaning inputs = InputMeaning::decimal;
   std::map<std::string, Setting> settings;  // by key or address, after --set; no sweep, no ask
@@ -55,16 +63,17 @@ struct Scenario {
   std::vector<std::pair<std::string, Value>> parameters_at(std::uint64_t index) const;
 };
 
-// Reads TOML 1.0. `source` is the file name for messages ("-" for standard input). The first syntax fault alone, or every
-// value fault; all points of all sweeps are resolved where that is at most 10 000 points, else the corners of the product.
+// Reads TOML 1.0. `source` is the file name for messages ("-" for standard input). The first syntax fault alone, or
+// every value fault; all points of all sweeps are resolved where that is at most 10 000 points, else the corners of the
+// product.
 Expected<Scenario> read_scenario(std::string_view text, const std::string& source,
                                  const std::vector<Assignment>& assignments = {});
 
 // The chain at one point of the sweeps. Faults where values are out of range or contradict each other.
 Expected<Chain> chain_at(const Scenario& scenario, std::uint64_t index);
 
-// The chain that results when the settings of a scenario (sweeps left out) are changed by these values: what a table row
-// or a search over a key needs. Keys and addresses as in the scenario.
+// The chain that results when the settings of a scenario (sweeps left out) are changed by these values: what a table
+// row or a search over a key needs. Keys and addresses as in the scenario.
 Expected<Chain> chain_with(const Scenario& scenario, const std::vector<std::pair<std::string, Value>>& changes);
 
 // A value as it is printed among the parameters of a result.
