@@ -61,7 +61,14 @@ class Walk {
     if (member.value.kind == Node::Kind::table && (!member.value.members.empty() || is_scope(name))) {
       return table(member.value, name + ".", under_override);
     }
-    faults_.add(unknown_key(place_of(member, source_, name)));
+    unknown(place_of(member, source_, name));
+  }
+
+  // Looking for the nearest name takes its time, so a text full of unknown keys gets that help for the first ones only.
+  void unknown(const Location& location) {
+    constexpr int most_suggestions = 100;
+    faults_.add(++unknown_ <= most_suggestions ? unknown_key(location)
+                                               : Fault{location, "is an unknown key", std::string(how_to_list)});
   }
 
   void setting(const Member& member, const std::string& name, const Key& key, bool under_override) {
@@ -80,6 +87,7 @@ class Walk {
   Items& items_;
   Collector& faults_;
   std::set<std::string> names_;
+  int unknown_ = 0;
 };
 
 std::optional<Item> assigned_item(const Assignment& assignment, Items& items, Collector& faults) {

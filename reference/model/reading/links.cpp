@@ -8,6 +8,9 @@ namespace {
 constexpr std::array squeezed_forms = {Field::pair_parameter, Field::squeezing, Field::mean_pairs};
 constexpr std::string_view allowed_forms = "exactly one of pair_parameter, squeezing, mean_pairs";
 
+constexpr std::string_view allowed_channel =
+    "either channel.transmittance, or channel.length_km with channel.attenuation_db_per_km";
+
 // lam = tanh(chi)^2 = mu/(1+mu).
 Real pair_parameter_of(Field form, const Rational& x) {
   if (form == Field::mean_pairs) return Rational(x / (1 + x));
@@ -82,16 +85,20 @@ Arm channel_arm(const Point& point, std::size_t stations, bool mandatory, Collec
   if (transmittance != nullptr) {
     for (const Entry* other : {length, attenuation, insertion}) {
       if (other == nullptr) continue;
-      faults.add(Fault{point.location_of(*other), "stands beside channel.transmittance",
-                       "either channel.transmittance, or channel.length_km with channel.attenuation_db_per_km"});
+      faults.add(Fault{point.location_of(*other), "stands beside channel.transmittance", std::string(allowed_channel)});
     }
     return {number_or_zero(transmittance->value)};
   }
   const bool partial = length != nullptr || attenuation != nullptr || insertion != nullptr;
   if (!partial && !mandatory) return {};
-  if (!partial) faults.add(missing(point, Scope::channel, Field::transmittance));
-  if (partial && length == nullptr) faults.add(missing(point, Scope::channel, Field::length_km));
-  if (partial && attenuation == nullptr) faults.add(missing(point, Scope::channel, Field::attenuation_db_per_km));
+  if (!partial) {
+    Fault fault = missing(point, Scope::channel, Field::transmittance);
+    fault.allowed = allowed_channel;
+    faults.add(fault);
+    return {};
+  }
+  if (length == nullptr) faults.add(missing(point, Scope::channel, Field::length_km));
+  if (attenuation == nullptr) faults.add(missing(point, Scope::channel, Field::attenuation_db_per_km));
   return {transmittance_of_length(point, stations)};
 }
 
