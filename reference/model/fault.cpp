@@ -3,9 +3,8 @@
 #include <fmt/format.h>
 
 namespace heraldgauge::model {
-namespace {
 
-std::string printable(const std::string& text) {
+std::string printable(std::string_view text) {
   std::string shown;
   for (const char c : text) {
     const auto byte = static_cast<unsigned char>(c);
@@ -17,8 +16,6 @@ std::string printable(const std::string& text) {
   }
   return shown;
 }
-
-}  // namespace
 
 std::string describe(const Fault& fault) {
   const Location& at = fault.location;

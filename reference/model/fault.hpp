@@ -3,6 +3,7 @@
 // Expected; nothing in the libraries prints, exits or aborts.
 
 #include <string>
+#include <string_view>
 #include <utility>
 #include <variant>
 #include <vector>
@@ -26,8 +27,11 @@ struct Fault {
 
 using Faults = std::vector<Fault>;
 
-// One line: "link.toml:12:3: key: what is wrong; allowed: what is allowed". Control characters are shown as \xNN.
+// One line: "link.toml:12:3: key: what is wrong; allowed: what is allowed", made printable.
 std::string describe(const Fault& fault);
+
+// The text with control characters shown as \xNN, so that foreign text cannot steer a terminal or break a line.
+std::string printable(std::string_view text);
 
 // A value, or the faults that prevented it (never empty in that case).
 template <class T>
