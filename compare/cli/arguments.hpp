@@ -1,0 +1,36 @@
+#pragma once
+// The command line as text, before anything in it is judged. The only place that knows the options' spelling.
+
+#include <string>
+#include <variant>
+#include <vector>
+
+#include "compare/cli/exit_status.hpp"
+
+namespace heraldgauge::cli {
+
+struct Arguments {
+  std::string command;  // enclose | quick | list
+  std::string scenario;
+  std::vector<std::string> quantities;
+  std::vector<std::string> assignments;  // KEY=VALUE
+  std::string format = "text";
+  std::string output = "-";
+  std::string threads;  // empty: as many as the machine has
+  std::string digits = "30";
+  std::string route;  // empty: the cheaper one
+  bool exact = false;
+  std::string certificate;  // empty: none
+  std::string list_subject;
+};
+
+// What to print instead of running a command: help or version for standard output, a usage fault for standard error.
+struct Stop {
+  ExitStatus status;
+  std::string out;
+  std::string err;
+};
+
+std::variant<Arguments, Stop> parse_arguments(int count, const char* const* values);
+
+}  // namespace heraldgauge::cli

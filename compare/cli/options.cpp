@@ -1,0 +1,108 @@
+#include "compare/cli/options.hpp"
+
+#include "reference/model/exact_number.hpp"
+#include "reference/model/reading/keys.hpp"
+
+namespace heraldgauge::cli {
+namespace {
+
+using model::Fault;
+using model::Faults;
+
+constexpr long largest_thread_count = 1024;
+
+Fault fault_of(const std::string& option, const std::string& wrong, const std::string& allowed) {
+  return {{option, 0, 0, ""}, wrong, allowed};
+}
+
+// A whole number from 1 to `largest`, else `otherwise` with a fault.
+long whole_number(const std::string& option, const std::string& text, long largest, long otherwise, Faults& faults) {
+  const auto number = model::parse_exact(text);
+  if (number && number->get_den() == 1 && *number >= 1 && *number <= largest) return number->get_num().get_si();
+  faults.push_back(fault_of(option, "'" + text + "'", "a whole number from 1 to " + std::to_string(largest)));
+  return otherwise;
+}
+
+std::vector<std::string> quantity_names() {
+  std::vector<std::string> names;
+  for (const model::Quantity& quantity : model::all_quantities(true)) names.push_back(model::name_of(quantity));
+  return names;
+}
+
+std::vector<model::Quantity> quantities_named(const std::vector<std::string>& names, Faults& faults) {
+  std::vector<model::Quantity> quantities;
+  for (const std::string& name : names) {
+    if (const auto quantity = model::find_quantity(name)) {
+      quantities.push_back(*quantity);
+      continue;
+    }
+    const std::string nearest = model::reading::nearest_name(name, quantity_names());
+    const std::string question = nearest.empty() ? "" : "; did you mean " + nearest + "?";
+    faults.push_back(
+        fault_of("--quantity", "'" + name + "' is no quantity" + question, "a name from heraldgauge list quantities"));
+  }
+  return quantities;
+}
+
+std::vector<model::Assignment> assignments_of(const std::vector<std::string>& texts, Faults& faults) {
+  std::vector<model::Assignment> assignments;
+  for (const std::string& text : texts) {
+    const std::size_t equals = text.find('=');
+    if (equals == std::string::npos || equals == 0) {
+      faults.push_back(fault_of("--set", "'" + text + "'", "KEY=VALUE"));
+    } else {
+      assignments.push_back({text.substr(0, equals), text.substr(equals + 1)});
+    }
+  }
+  return assignments;
+}
+
+reports::Format format_named(const std::string& name, Faults& faults) {
+  if (const auto format = reports::find_format(name)) return *format;
+  faults.push_back(fault_of("--format", "'" + name + "'", "text, json or csv"));
+  return reports::Format::text;
+}
+
+reference::RouteChoice route_named(const std::string& name, Faults& faults) {
+  if (name == "determinant") return reference::RouteChoice::determinant;
+  if (name == "pair-number") return reference::RouteChoice::pair_number;
+  if (!name.empty()) faults.push_back(fault_of("--route", "'" + name + "'", "determinant or pair-number"));
+  return reference::RouteChoice::cheaper;
+}
+
+compare::ListSubject subject_named(const std::string& name, Faults& faults) {
+  if (const auto subject = compare::find_list_subject(name)) return *subject;
+  faults.push_back(fault_of("list", "'" + name + "'", "quantities, shortcuts, conventions or keys"));
+  return compare::ListSubject::quantities;
+}
+
+void refuse_two_documents_in_one_place(const Arguments& arguments, Faults& faults) {
+  if (arguments.certificate == arguments.output) {
+    faults.push_back(fault_of("--certificate", "it would go to the same place as the answer", "another FILE"));
+  }
+}
+
+}  // namespace
+
+model::Expected<Options> resolve_options(const Arguments& arguments) {
+  Options options;
+  Faults faults;
+  options.format = format_named(arguments.format, faults);
+  options.assignments = assignments_of(arguments.assignments, faults);
+  options.enclose.quantities = options.quick.quantities = quantities_named(arguments.quantities, faults);
+  if (!arguments.threads.empty()) {
+    options.enclose.threads = options.quick.threads =
+        static_cast<unsigned>(whole_number("--threads", arguments.threads, largest_thread_count, 1, faults));
+  }
+  options.enclose.digits =
+      static_cast<int>(whole_number("--digits", arguments.digits, reference::largest_digits, 1, faults));
+  options.enclose.route = route_named(arguments.route, faults);
+  options.enclose.exact = arguments.exact;
+  options.enclose.with_certificate = !arguments.certificate.empty();
+  if (arguments.command == "list") options.list_subject = subject_named(arguments.list_subject, faults);
+  refuse_two_documents_in_one_place(arguments, faults);
+  if (!faults.empty()) return faults;
+  return options;
+}
+
+}  // namespace heraldgauge::cli
