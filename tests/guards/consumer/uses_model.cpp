@@ -1,0 +1,3 @@
+#include "link.hpp"
+
+int main() { return link().station_count() == 1 ? 0 : 1; }
