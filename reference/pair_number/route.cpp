@@ -14,6 +14,8 @@ using namespace pair_number;
 using model::Ask;
 using model::Rational;
 
+using Table = std::vector<std::vector<Interval>>;  // [left pattern][right pattern]
+
 // The four patterns of an end, index 2 * plus + cross.
 std::vector<EndAsk> end_patterns() {
   const Ask silent{Ask::Kind::silent};
@@ -42,14 +44,14 @@ class EndContraction {
     sectors_ = only_zero ? 0 : sectors_within(cutoffs);
   }
 
-  std::vector<std::vector<Interval>> corrected() const {
+  Table corrected() const {
     std::vector<SectorStack> states;
     for (const EndAsk& ask : left_) states.push_back(left_elements(ask));
     return closed(contract_stations(link_, cutoffs_, Strings::corrected, std::move(states), bits_));
   }
 
   // Strings with an even and with an odd number of psi- by themselves, nothing corrected.
-  std::array<std::vector<std::vector<Interval>>, 2> by_parity() const {
+  std::array<Table, 2> by_parity() const {
     std::vector<SectorStack> states;
     for (const EndAsk& ask : left_) {
       states.push_back(left_elements(ask));
@@ -70,8 +72,8 @@ class EndContraction {
     for (const Matrix& matrix : stack) zeros.emplace_back(matrix.rows(), matrix.columns(), bits_);
     return zeros;
   }
-  std::vector<std::vector<Interval>> closed(const std::vector<SectorStack>& states) const {
-    std::vector<std::vector<Interval>> table(states.size());
+  Table closed(const std::vector<SectorStack>& states) const {
+    Table table(states.size());
     for (const EndAsk& ask : right_) {
       const SectorStack end =
           end_elements(link_.right_end(), Side::right, ask, angles_.right_deg, cutoffs_.back(), sectors_, bits_);
@@ -107,11 +109,16 @@ class PairNumberRoute : public Route {
 
   Bounded<EndTable<Interval>> ends(Basis basis, const Accuracy& accuracy) const override {
     const std::vector<EndAsk> patterns = end_patterns();
-    const CertifiedTail tail = certified_tail(heralded_, patterns, patterns, accuracy.log2_tail);
+    const bool exchanging = exchanges_bits(basis);
+    // Two bounds are added where bits are exchanged.
+    const double log2_tail = accuracy.log2_tail - (exchanging ? 1 : 0);
+    const CertifiedTail tail = certified_tail(heralded_, patterns, patterns, log2_tail);
     const EndContraction contraction(heralded_, angles_of(chain_, basis), patterns, patterns, tail.cutoffs,
                                      accuracy.bits);
-    const auto table = exchanges_bits(basis) ? with_exchanged_bits(contraction.by_parity()) : contraction.corrected();
-    return {raised_table(table, tail.bound), tail.cutoffs, tail.largest};
+    const Table kept = exchanging ? with_exchanged_bits(contraction.by_parity()) : contraction.corrected();
+    // A string of either parity may leave its tail at a pattern or at the exchanged one.
+    const Table left_out = exchanging ? with_exchanged_bits({tail.bound, tail.bound}) : tail.bound;
+    return {raised_table(kept, left_out), tail.cutoffs, exchanging ? tail.largest * 2L : tail.largest};
   }
 
   AngularProfile profile(const Accuracy& accuracy) const override { return pair_number_profile(heralded_, accuracy); }
@@ -127,23 +134,25 @@ class PairNumberRoute : public Route {
     return {raised(contraction.corrected()[0][0], tail.largest), tail.cutoffs, tail.largest};
   }
 
-  // With alike detectors at the right end, exchanging the bits at 45 degrees is the same as reversing V.
+  // Without psi- there is nothing to exchange; with alike detectors at the right end, exchanging the bits at 45 degrees
+  // is the same as reversing V.
   bool exchanges_bits(Basis basis) const {
     const auto& detectors = chain_.right_end.detectors;
-    return basis == Basis::diagonal && detectors[model::plus] != detectors[model::cross];
+    const bool has_minus =
+        std::any_of(chain_.stations.begin(), chain_.stations.end(),
+                    [](const model::Station& station) { return station.herald != model::Herald::psi_plus; });
+    return basis == Basis::diagonal && has_minus && detectors[model::plus] != detectors[model::cross];
   }
 
-  static std::vector<std::vector<Interval>> with_exchanged_bits(
-      std::array<std::vector<std::vector<Interval>>, 2> by_parity) {
-    auto table = by_parity[0];
+  static Table with_exchanged_bits(const std::array<Table, 2>& by_parity) {
+    Table table = by_parity[0];
     for (std::size_t left = 0; left < 4; ++left) {
       for (std::size_t right = 0; right < 4; ++right) table[left][right] += by_parity[1][left][exchanged(right)];
     }
     return table;
   }
 
-  static EndTable<Interval> raised_table(const std::vector<std::vector<Interval>>& kept,
-                                         const std::vector<std::vector<Interval>>& tail) {
+  static EndTable<Interval> raised_table(const Table& kept, const Table& tail) {
     const auto row = [&](std::size_t left) {
       const auto entry = [&](std::size_t right) { return raised(kept[left][right], tail[left][right]); };
       return std::array<Interval, 4>{entry(0), entry(1), entry(2), entry(3)};

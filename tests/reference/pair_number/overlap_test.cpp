@@ -68,7 +68,10 @@ class RoutesOverlap : public testing::TestWithParam<int> {};
 
 TEST_P(RoutesOverlap, OnRandomChains) {
   const int digits = GetParam();
-  test::for_each_case(digits <= 20 ? 8 : 3, 700 + static_cast<std::uint64_t>(digits),
+  test::for_each_case(digits <= 20   ? 8
+                      : digits <= 50 ? 3
+                                     : 1,
+                      700 + static_cast<std::uint64_t>(digits),
                       [digits](Random& random) { expect_meeting_routes(random, digits); });
 }
 
