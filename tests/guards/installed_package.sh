@@ -7,5 +7,7 @@ trap 'rm -rf "$place"' EXIT
 cmake --install "$1" --prefix "$place/installed" >/dev/null
 cmake -S "$here/consumer" -B "$place/build" -G Ninja -DCMAKE_BUILD_TYPE=Release -DCMAKE_PREFIX_PATH="$place/installed" >/dev/null
 cmake --build "$place/build"
-for program in model reference fast reports compare; do "$place/build/uses_$program"; done
+for library in model reference fast reports compare; do
+  "$place/build/uses_$library" || { echo "heraldgauge::$library does not work when installed"; exit 1; }
+done
 "$place/installed/bin/heraldgauge" --version
