@@ -1,6 +1,7 @@
 #pragma once
 // The command line as text, before anything in it is judged. The only place that knows the options' spelling.
 
+#include <optional>
 #include <string>
 #include <variant>
 #include <vector>
@@ -16,11 +17,11 @@ struct Arguments {
   std::vector<std::string> assignments;  // KEY=VALUE
   std::string format = "text";
   std::string output = "-";
-  std::string threads;  // empty: as many as the machine has
+  std::optional<std::string> threads;  // none: as many as the machine has
   std::string digits = "30";
-  std::string route;  // empty: the cheaper one
+  std::optional<std::string> route;  // none: the cheaper one
   bool exact = false;
-  std::string certificate;  // empty: none
+  std::optional<std::string> certificate;
   std::string list_subject;
 };
 

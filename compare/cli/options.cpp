@@ -66,7 +66,7 @@ reports::Format format_named(const std::string& name, Faults& faults) {
 reference::RouteChoice route_named(const std::string& name, Faults& faults) {
   if (name == "determinant") return reference::RouteChoice::determinant;
   if (name == "pair-number") return reference::RouteChoice::pair_number;
-  if (!name.empty()) faults.push_back(fault_of("--route", "'" + name + "'", "determinant or pair-number"));
+  faults.push_back(fault_of("--route", "'" + name + "'", "determinant or pair-number"));
   return reference::RouteChoice::cheaper;
 }
 
@@ -90,15 +90,15 @@ model::Expected<Options> resolve_options(const Arguments& arguments) {
   options.format = format_named(arguments.format, faults);
   options.assignments = assignments_of(arguments.assignments, faults);
   options.enclose.quantities = options.quick.quantities = quantities_named(arguments.quantities, faults);
-  if (!arguments.threads.empty()) {
+  if (arguments.threads) {
     options.enclose.threads = options.quick.threads =
-        static_cast<unsigned>(whole_number("--threads", arguments.threads, largest_thread_count, 1, faults));
+        static_cast<unsigned>(whole_number("--threads", *arguments.threads, largest_thread_count, 1, faults));
   }
   options.enclose.digits =
       static_cast<int>(whole_number("--digits", arguments.digits, reference::largest_digits, 1, faults));
-  options.enclose.route = route_named(arguments.route, faults);
+  if (arguments.route) options.enclose.route = route_named(*arguments.route, faults);
   options.enclose.exact = arguments.exact;
-  options.enclose.with_certificate = !arguments.certificate.empty();
+  options.enclose.with_certificate = arguments.certificate.has_value();
   if (arguments.command == "list") options.list_subject = subject_named(arguments.list_subject, faults);
   refuse_two_documents_in_one_place(arguments, faults);
   if (!faults.empty()) return faults;

@@ -82,6 +82,7 @@ std::optional<model::Fault> output_fault(const std::string& option, const std::s
   const auto fault = [&](const std::string& wrong) {
     return model::Fault{{option, 0, 0, ""}, "'" + name + "' " + wrong, "a new file, a regular file to replace, or -"};
   };
+  if (name.empty()) return fault("is no name");
   struct stat existing;
   if (name == "-" || lstat(name.c_str(), &existing) != 0) return std::nullopt;
   if (S_ISLNK(existing.st_mode)) return fault("is a symbolic link");

@@ -32,7 +32,7 @@ ExitStatus run_enclose(const Arguments& arguments, const Options& options, const
   if (!answer) return refuse(answer.faults());
   ExitStatus status = answer->decided ? ExitStatus::done : ExitStatus::undecided;
   if (answer->certificate) {
-    status = graver(status, deliver(arguments.certificate, reports::write(*answer->certificate)));
+    status = graver(status, deliver(*arguments.certificate, reports::write(*answer->certificate)));
   }
   return graver(status, deliver(arguments, options, answer->report));
 }
@@ -55,8 +55,8 @@ model::Expected<model::Scenario> scenario_of(const Arguments& arguments, const O
 model::Faults output_faults(const Arguments& arguments) {
   model::Faults faults;
   if (const auto fault = output_fault("--output", arguments.output, arguments.scenario)) faults.push_back(*fault);
-  if (arguments.certificate.empty()) return faults;
-  if (const auto fault = output_fault("--certificate", arguments.certificate, arguments.scenario)) {
+  if (!arguments.certificate) return faults;
+  if (const auto fault = output_fault("--certificate", *arguments.certificate, arguments.scenario)) {
     faults.push_back(*fault);
   }
   return faults;

@@ -46,6 +46,9 @@ TEST(Status, IsTwoForValuesOutOfRange) {
   for (const char* digits : {"0", "-1", "10001", "3.5", "many", "1e99", "nan", "0x10", ""}) {
     expect_refused(heraldgauge({"enclose", "-", std::string("--digits=") + digits}, small_scenario()), "--digits");
   }
+  for (const char* option : {"--threads", "--route", "--output", "--certificate", "--quantity", "--format", "--set"}) {
+    expect_refused(heraldgauge({"enclose", "-", option, ""}, small_scenario()), option);
+  }
   expect_refused(heraldgauge({"enclose", "-", "--threads", "0"}, small_scenario()), "--threads");
   expect_refused(heraldgauge({"enclose", "-", "--route", "scenic"}, small_scenario()), "determinant or pair-number");
   expect_refused(heraldgauge({"enclose", "-", "--format", "runes"}, small_scenario()), "text, json or csv");
