@@ -1,6 +1,6 @@
 #pragma once
-// One name for the two arithmetics in which the determinant route runs: outward-rounded intervals of a precision, and exact
-// rationals. A Field turns exact reals into its Numbers; the free functions write their result in place.
+// One name for the two arithmetics in which the determinant route runs: outward-rounded intervals of a precision, and
+// exact rationals. A Field turns exact reals into its Numbers; the free functions write their result in place.
 
 #include "reference/arithmetic/interval.hpp"
 #include "reference/model/real.hpp"

@@ -2,8 +2,8 @@
 // The chain as plain data: N swap stations, N + 1 pair sources, two measured ends. Every number is exact and has been
 // checked against its range; no physics here.
 //
-// Source k = 0..N feeds the arms L_k and R_k. The left end measures L_0, the right end R_N, and station k = 1..N measures
-// R_{k-1} together with L_k; stations[k-1] holds station k.
+// Source k = 0..N feeds the arms L_k and R_k. The left end measures L_0, the right end R_N, and station k = 1..N
+// measures R_{k-1} together with L_k; stations[k-1] holds station k.
 
 #include <array>
 #include <cstddef>
@@ -69,7 +69,7 @@ struct End {
 };
 
 struct Protocol {
-  Rational sifting{1, 2};                     // in (0,1]
+  Rational sifting{1, 2};                    // in (0,1]
   Rational error_correction_factor{29, 25};  // f >= 1
   friend bool operator==(const Protocol&, const Protocol&) = default;
 };
@@ -87,8 +87,8 @@ struct Chain {
   std::size_t station_count() const { return stations.size(); }
 };
 
-// The same chain seen from the other end: sources, arms, stations and ends in reverse order. At a station the two inputs
-// exchange, so detectors c stay and detectors d stay (only the sign of a field amplitude changes).
+// The same chain seen from the other end: sources, arms, stations and ends in reverse order. At a station the two
+// inputs exchange, so detectors c stay and detectors d stay (only the sign of a field amplitude changes).
 Chain mirrored(const Chain& chain);
 
 }  // namespace heraldgauge::model

@@ -54,7 +54,8 @@ const QuantityEntry& entry_of(const Quantity& quantity);
 std::string name_of(const Quantity& quantity);
 std::optional<Quantity> find_quantity(std::string_view name);
 
-// Every quantity, the 16 end patterns one by one, in registry order; pattern_probability only where a pattern is stated.
+// Every quantity, the 16 end patterns one by one, in registry order; pattern_probability only where a pattern is
+// stated.
 std::vector<Quantity> all_quantities(bool with_pattern);
 
 }  // namespace heraldgauge::model

@@ -11,9 +11,7 @@ Rational integer_power_of_ten(long exponent) {
   return exponent < 0 ? Rational(1) / power : Rational(power);
 }
 
-bool is_small_integer(const Rational& x) {
-  return x.get_den() == 1 && abs(x.get_num()) <= largest_folded_power;
-}
+bool is_small_integer(const Rational& x) { return x.get_den() == 1 && abs(x.get_num()) <= largest_folded_power; }
 
 }  // namespace
 
@@ -32,9 +30,7 @@ Real Real::power_of_ten(const Real& x) {
 
 Real Real::exponential(const Real& x) { return x.is_zero() ? Real(1) : unary(Operation::exponential, x); }
 
-Real Real::hyperbolic_tangent(const Real& x) {
-  return x.is_zero() ? Real(0) : unary(Operation::hyperbolic_tangent, x);
-}
+Real Real::hyperbolic_tangent(const Real& x) { return x.is_zero() ? Real(0) : unary(Operation::hyperbolic_tangent, x); }
 
 Real Real::square_root(const Real& x) {
   if (x.is_rational() && mpz_perfect_square_p(x.rational().get_num_mpz_t()) &&
@@ -85,14 +81,22 @@ std::string Real::text() const {
   const Node& node = *std::get<1>(content_);
   const std::string first = node.first.text();
   switch (node.operation) {
-    case Operation::add: return "(" + first + " + " + node.second.text() + ")";
-    case Operation::subtract: return "(" + first + " - " + node.second.text() + ")";
-    case Operation::multiply: return first + " * " + node.second.text();
-    case Operation::divide: return first + " / (" + node.second.text() + ")";
-    case Operation::power_of_ten: return "10^(" + first + ")";
-    case Operation::exponential: return "exp(" + first + ")";
-    case Operation::hyperbolic_tangent: return "tanh(" + first + ")";
-    case Operation::square_root: break;
+    case Operation::add:
+      return "(" + first + " + " + node.second.text() + ")";
+    case Operation::subtract:
+      return "(" + first + " - " + node.second.text() + ")";
+    case Operation::multiply:
+      return first + " * " + node.second.text();
+    case Operation::divide:
+      return first + " / (" + node.second.text() + ")";
+    case Operation::power_of_ten:
+      return "10^(" + first + ")";
+    case Operation::exponential:
+      return "exp(" + first + ")";
+    case Operation::hyperbolic_tangent:
+      return "tanh(" + first + ")";
+    case Operation::square_root:
+      break;
   }
   return "sqrt(" + first + ")";
 }

@@ -69,14 +69,22 @@ typename Engine::Number Real::evaluate(const Engine& engine) const {
   const Node& node = *std::get<1>(content_);
   const auto first = node.first.evaluate(engine);
   switch (node.operation) {
-    case Operation::add: return engine.add(first, node.second.evaluate(engine));
-    case Operation::subtract: return engine.subtract(first, node.second.evaluate(engine));
-    case Operation::multiply: return engine.multiply(first, node.second.evaluate(engine));
-    case Operation::divide: return engine.divide(first, node.second.evaluate(engine));
-    case Operation::power_of_ten: return engine.power_of_ten(first);
-    case Operation::exponential: return engine.exponential(first);
-    case Operation::hyperbolic_tangent: return engine.hyperbolic_tangent(first);
-    case Operation::square_root: break;
+    case Operation::add:
+      return engine.add(first, node.second.evaluate(engine));
+    case Operation::subtract:
+      return engine.subtract(first, node.second.evaluate(engine));
+    case Operation::multiply:
+      return engine.multiply(first, node.second.evaluate(engine));
+    case Operation::divide:
+      return engine.divide(first, node.second.evaluate(engine));
+    case Operation::power_of_ten:
+      return engine.power_of_ten(first);
+    case Operation::exponential:
+      return engine.exponential(first);
+    case Operation::hyperbolic_tangent:
+      return engine.hyperbolic_tangent(first);
+    case Operation::square_root:
+      break;
   }
   return engine.square_root(first);
 }

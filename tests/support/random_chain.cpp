@@ -30,7 +30,9 @@ class Drawer {
     return static_cast<model::Herald>(random_() % 3);
   }
 
-  Rational angle() { return recipe_.free_angles ? Rational(std::round(uniform(random_, -180, 180) * 64) / 64) : Rational(0); }
+  Rational angle() {
+    return recipe_.free_angles ? Rational(std::round(uniform(random_, -180, 180) * 64) / 64) : Rational(0);
+  }
 
  private:
   Real draw_lam() { return Rational(log_uniform(random_, recipe_.smallest_lam, recipe_.largest_lam)); }
@@ -39,9 +41,12 @@ class Drawer {
   }
   Real draw_indistinguishability() {
     switch (random_() % 4) {
-      case 0: return Real(1);
-      case 1: return Real(0);
-      default: return Rational(uniform(random_, 0, 1));
+      case 0:
+        return Real(1);
+      case 1:
+        return Real(0);
+      default:
+        return Rational(uniform(random_, 0, 1));
     }
   }
   Detector draw_detector() {
