@@ -135,7 +135,7 @@ class Certifier {
 
   // The herald alone is cheap and shows how much the signed sum of determinants cancels.
   void prepare_tables() {
-    tables_.emplace(chain_, make_route(route_, chain_), aimed_accuracy(chain_, request_.digits));
+    tables_.emplace(chain_, make_route(route_, chain_), aimed_accuracy(chain_, route_, request_.digits));
     if (chain_.station_count() == 0 || route_ != RouteName::determinant) return;
     tables_->begin_value();
     const auto missing = missing_bits(tables_->herald(), std::nullopt, request_.digits);

@@ -16,6 +16,7 @@ using model::Fault;
 using model::Real;
 
 constexpr double most_determinant_terms = 4e6;
+constexpr double always_cheap_terms = 256;  // so few that predicting the other route's cost would cost more
 constexpr Precision first_guard_bits = 64;
 
 Fault route_fault(const std::string& wrong, const std::string& allowed) {
@@ -44,8 +45,8 @@ double approximately(const Real& x) {
   return mpfi_get_d(enclosed.raw());
 }
 
-// How rarely an end clicks, as bits of -log2 of eta t lam + d: a guess of how far a wanted joint probability lies below the
-// herald, so that the first attempt at it is usually the last.
+// How rarely an end clicks, as bits of -log2 of eta t lam + d: a guess of how far a wanted joint probability lies below
+// the herald, so that the first attempt at it is usually the last.
 double bits_of_rarity(const model::End& end, const model::Arm& arm, const model::Source& source) {
   constexpr double most_bits = 60;
   double likeliest = 0;
@@ -58,7 +59,8 @@ double bits_of_rarity(const model::End& end, const model::Arm& arm, const model:
 
 bool is_off_axis(const Rational& degrees) { return Rational(degrees / 90).get_den() != 1; }
 
-// Whether some quantity asked for needs the coherences between H and V: both analysers away from multiples of 90 degrees.
+// Whether some quantity asked for needs the coherences between H and V: both analysers away from multiples of 90
+// degrees.
 bool reads_all_sectors(const Chain& chain, const Request& request) {
   if (chain.station_count() == 0) return false;
   const bool analysers = is_off_axis(chain.left_end.analyser_deg) && is_off_axis(chain.right_end.analyser_deg);
@@ -66,12 +68,16 @@ bool reads_all_sectors(const Chain& chain, const Request& request) {
     switch (quantity.kind) {
       case model::QuantityKind::qber_diagonal:
       case model::QuantityKind::key_fraction:
-      case model::QuantityKind::key_rate: return true;
+      case model::QuantityKind::key_rate:
+        return true;
       case model::QuantityKind::end_pattern:
-      case model::QuantityKind::pattern_probability: return analysers;
+      case model::QuantityKind::pattern_probability:
+        return analysers;
       case model::QuantityKind::visibility:
-      case model::QuantityKind::visibility_deficit: return is_off_axis(chain.left_end.analyser_deg);
-      default: return false;
+      case model::QuantityKind::visibility_deficit:
+        return is_off_axis(chain.left_end.analyser_deg);
+      default:
+        return false;
     }
   });
 }
@@ -101,12 +107,16 @@ Expected<RouteName> choose_route(const Chain& chain, const Request& request) {
     case RouteChoice::pair_number:
       if (pair_number) return route_fault(*pair_number, "determinant, or no --route");
       return RouteName::pair_number;
-    case RouteChoice::cheaper: break;
+    case RouteChoice::cheaper:
+      break;
   }
-  if (determinant && pair_number) return route_fault(*determinant + ", and " + *pair_number, "a chain that one of them serves");
+  if (determinant && pair_number)
+    return route_fault(*determinant + ", and " + *pair_number, "a chain that one of them serves");
   if (determinant) return RouteName::pair_number;
-  if (pair_number || request.exact) return RouteName::determinant;
-  return determinant_cost(chain) <= pair_number_cost(chain, aimed_accuracy(chain, request.digits), reads_all_sectors(chain, request))
+  if (pair_number || request.exact || determinant_terms(chain) <= always_cheap_terms) return RouteName::determinant;
+  return determinant_cost(chain) <= pair_number_cost(chain,
+                                                     aimed_accuracy(chain, RouteName::pair_number, request.digits),
+                                                     reads_all_sectors(chain, request))
              ? RouteName::determinant
              : RouteName::pair_number;
 }
@@ -115,12 +125,13 @@ std::unique_ptr<Route> make_route(RouteName name, const Chain& chain) {
   return name == RouteName::determinant ? make_determinant_route(chain) : make_pair_number_route(chain);
 }
 
-Accuracy aimed_accuracy(const Chain& chain, int digits) {
-  const double log2_herald = pair_number_log2_herald(chain);
+Accuracy aimed_accuracy(const Chain& chain, RouteName route, int digits) {
+  const double log2_herald = route == RouteName::pair_number ? pair_number_log2_herald(chain) : 0;
   const double ends = bits_of_rarity(chain.left_end, chain.left_arms.front(), chain.sources.front()) +
                       bits_of_rarity(chain.right_end, chain.right_arms.back(), chain.sources.back());
   const double asked_bits = bits_per_digit * (digits + 1) + ends;
-  return {static_cast<Precision>(asked_bits) + first_guard_bits, (std::isfinite(log2_herald) ? log2_herald : 0) - asked_bits};
+  return {static_cast<Precision>(asked_bits) + first_guard_bits,
+          (std::isfinite(log2_herald) ? log2_herald : 0) - asked_bits};
 }
 
 std::size_t input_bits(const Chain& chain) {

@@ -16,8 +16,9 @@ model::Expected<RouteName> choose_route(const model::Chain& chain, const Request
 
 std::unique_ptr<Route> make_route(RouteName name, const model::Chain& chain);
 
-// Where a first evaluation begins: bits for the digits, and a tail as far below the likely herald probability.
-Accuracy aimed_accuracy(const model::Chain& chain, int digits);
+// Where a route's first evaluation begins: bits for the digits, and for pair numbers a tail as far below the likely
+// herald probability.
+Accuracy aimed_accuracy(const model::Chain& chain, RouteName route, int digits);
 
 // Bits of all exact inputs of a chain together: a measure of how long its rationals grow.
 std::size_t input_bits(const model::Chain& chain);

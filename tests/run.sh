@@ -6,7 +6,7 @@ source "$(dirname "${BASH_SOURCE[0]}")/../compare/setup.sh"
 
 require_packages "${program_packages[@]}" "${test_packages[@]}"
 folder="$top/build-tests"
-build "$folder"
+build "$folder" -DHERALDGAUGE_TESTS=ON
 
 log="$folder/tests.log"
 status=0
