@@ -170,6 +170,7 @@ Interval power(const Interval& x, unsigned long n) {
 
 Interval square_root(const Interval& x) { return apply(mpfi_sqrt, x); }
 Interval exponential(const Interval& x) { return apply(mpfi_exp, x); }
+Interval exponential_m1(const Interval& x) { return apply(mpfi_expm1, x); }
 Interval logarithm(const Interval& x) { return apply(mpfi_log, x); }
 Interval binary_logarithm(const Interval& x) { return apply(mpfi_log2, x); }
 Interval logarithm_1p(const Interval& x) { return apply(mpfi_log1p, x); }

@@ -91,6 +91,7 @@ Interval square(const Interval& x);                  // x^2, never negative
 Interval power(const Interval& x, unsigned long n);  // x^n by repeated squaring
 Interval square_root(const Interval& x);             // requires x >= 0
 Interval exponential(const Interval& x);
+Interval exponential_m1(const Interval& x);  // e^x - 1
 Interval power_of_ten(const Interval& x);
 Interval logarithm(const Interval& x);         // natural; requires x > 0
 Interval binary_logarithm(const Interval& x);  // requires x > 0

@@ -1,30 +1,12 @@
 #include "tests/support/arb_engine.hpp"
 
-#include <arb.h>
+#include "tests/support/ball.hpp"
 
 namespace heraldgauge::test {
 namespace {
 
 using reference::Interval;
 using reference::Precision;
-
-class Ball {
- public:
-  Ball() { arb_init(data_); }
-  Ball(const Ball&) = delete;
-  Ball& operator=(const Ball&) = delete;
-  ~Ball() { arb_clear(data_); }
-  arb_ptr raw() { return data_; }
-
- private:
-  arb_t data_;
-};
-
-Interval interval(Ball& ball, Precision bits) {
-  Interval result(bits);
-  arb_get_interval_mpfr(&result.raw()->left, &result.raw()->right, ball.raw());
-  return result;
-}
 
 void evaluate(Elementary f, arb_ptr y, arb_srcptr x, Precision bits) {
   Ball ten;
@@ -33,6 +15,8 @@ void evaluate(Elementary f, arb_ptr y, arb_srcptr x, Precision bits) {
       return arb_sqrt(y, x, bits);
     case Elementary::exponential:
       return arb_exp(y, x, bits);
+    case Elementary::exponential_m1:
+      return arb_expm1(y, x, bits);
     case Elementary::power_of_ten:
       arb_set_ui(ten.raw(), 10);
       return arb_pow(y, ten.raw(), x, bits);
@@ -58,19 +42,19 @@ std::optional<Interval> arb_value(Elementary f, const Interval& x, Precision bit
   arb_set_interval_mpfr(argument.raw(), &x.raw()->left, &x.raw()->right, bits);
   evaluate(f, value.raw(), argument.raw(), bits);
   if (!arb_is_finite(value.raw())) return std::nullopt;
-  return interval(value, bits);
+  return interval_of(value, bits);
 }
 
 Interval arb_pi(Precision bits) {
   Ball value;
   arb_const_pi(value.raw(), bits);
-  return interval(value, bits);
+  return interval_of(value, bits);
 }
 
 Interval arb_log_of_2(Precision bits) {
   Ball value;
   arb_const_log2(value.raw(), bits);
-  return interval(value, bits);
+  return interval_of(value, bits);
 }
 
 }  // namespace heraldgauge::test

@@ -11,6 +11,7 @@ namespace heraldgauge::test {
 enum class Elementary {
   square_root,
   exponential,
+  exponential_m1,
   power_of_ten,
   logarithm,
   binary_logarithm,
