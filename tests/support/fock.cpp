@@ -90,8 +90,7 @@ double station_element(const StationSide& side, int i, int j, int i2, int j2) {
         const int matched_r = i - x, matched_l = j - y - z;
         for (int c = 0; c <= matched_r + matched_l; ++c) {
           // R goes to (c + d)/sqrt2, L to (c - d)/sqrt2.
-          const double amplitudes =
-              mixer(matched_l, matched_r, c, s, -s) * mixer(j2 - y - z, i2 - x, c, s, -s);
+          const double amplitudes = mixer(matched_l, matched_r, c, s, -s) * mixer(j2 - y - z, i2 - x, c, s, -s);
           for (int c_other = 0; c_other <= z; ++c_other) {
             const double other = binomial(z, c_other) * std::pow(0.5, z);
             sum += split * amplitudes * other * response(side.c, side.c_ask, c + c_other) *
