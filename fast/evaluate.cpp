@@ -1,13 +1,194 @@
 #include "fast/evaluate.hpp"
 
-#include <cmath>
+#include <oneapi/tbb/parallel_for.h>
+#include <oneapi/tbb/task_arena.h>
+
+#include <algorithm>
+
+#include "fast/quantities.hpp"
 
 namespace heraldgauge::fast {
+namespace {
 
-double to_binary64(const Scaled& value) {
-  if (value.exponent > 4000) return std::copysign(INFINITY, value.significand);
-  if (value.exponent < -4000) return std::copysign(0.0, value.significand);
-  return std::ldexp(value.significand, static_cast<int>(value.exponent));
+using model::Quantity;
+using model::QuantityKind;
+
+constexpr double tail_allowed = 0x1p-48;
+constexpr double bound_allowed = 4e-13;  // beyond it the point is done again in double-double
+constexpr int most_attempts = 8;
+
+// A point with everything that does not change between attempts.
+struct Point {
+  const model::Chain* chain = nullptr;
+  ChainNumbers numbers;
+  ExactModes modes;
+  std::vector<int> cutoffs;
+  std::string refusal;
+};
+
+Point prepare(const model::Chain& chain) {
+  Point point;
+  point.chain = &chain;
+  auto numbers = numbers_of(chain);
+  if (const auto* reason = std::get_if<std::string>(&numbers)) {
+    point.refusal = *reason;
+    return point;
+  }
+  point.numbers = std::get<ChainNumbers>(std::move(numbers));
+  point.modes = modes_of(point.numbers);
+  if (point.modes.smallest_complement < 1e-13) {
+    point.refusal = "an efficiency times transmittance (or source.pair_parameter) is closer to 1 than 1e-13 and not 1";
+    return point;
+  }
+  if (const auto cutoffs = first_cutoffs(point.numbers, point.modes)) {
+    point.cutoffs = *cutoffs;
+  } else {
+    point.refusal = "source.pair_parameter needs more than " + std::to_string(largest_pairs) + " pairs a source";
+  }
+  return point;
+}
+
+// One operation, and what a complement 1 - x formed in double-double may have lost.
+template <class T>
+double unit_of(const Point& point) {
+  return Precision<T>::unit + 0x1p-102 / point.modes.smallest_complement;
+}
+
+template <class T>
+Formed attempt(const Point& point, const Planned& planned, const std::vector<Quantity>& quantities) {
+  const LinkModes<T> modes = rounded_modes<T>({&point.modes.modes});
+  const KernelResult<T> result = run_kernel(planned.plan, modes);
+  return form_values(*point.chain, sums_of(result, planned, modes.right, unit_of<T>(point)), quantities);
+}
+
+// Takes more pairs, or double-double, until the bounds are met or nothing more can be done.
+Formed improve(Formed formed, Point& point, const Needs& needs, const std::vector<Quantity>& quantities) {
+  bool precise = false;
+  for (int i = 0; i < most_attempts; ++i) {
+    const bool short_tail = formed.tail_share > tail_allowed;
+    if (!short_tail && (formed.worst_bound <= bound_allowed || precise)) break;
+    if (short_tail) {
+      const auto cutoffs = more_pairs(point.cutoffs, point.numbers);
+      if (!cutoffs) break;
+      point.cutoffs = *cutoffs;
+    } else {
+      precise = true;
+    }
+    const Planned planned = make_plan(point.numbers, point.modes, needs, point.cutoffs);
+    formed = precise ? attempt<DoubleDouble>(point, planned, quantities) : attempt<double>(point, planned, quantities);
+  }
+  for (Value& value : formed.values) {
+    if (value.status != Status::computed || value.relative_error_bound < 0.1) continue;
+    value = {value.quantity, Status::declined, "its terms cancel below the precision of double-double", {}, 0};
+  }
+  return formed;
+}
+
+std::vector<Value> declined(const model::Chain& chain, const std::vector<Quantity>& quantities,
+                            const std::string& reason) {
+  std::vector<Value> values;
+  for (const Quantity& quantity : quantities) {
+    values.push_back(is_capacity(quantity.kind) ? capacity(chain, quantity)
+                                                : Value{quantity, Status::declined, reason, {}, 0});
+  }
+  return values;
+}
+
+// The points of one block: those whose plans are equal go through the kernel four at a time, and every lane's bytes are
+// those of the point alone.
+class Block {
+ public:
+  Block(std::span<const model::Chain> chains, const std::vector<Quantity>& quantities, std::vector<Value>* answers)
+      : quantities_(quantities), needs_(needs_of(quantities)), answers_(answers) {
+    for (const model::Chain& chain : chains) points_.push_back(prepare(chain));
+  }
+
+  void run() {
+    for (std::size_t i = 0; i < points_.size(); ++i) {
+      if (!points_[i].refusal.empty()) {
+        answers_[i] = declined(*points_[i].chain, quantities_, points_[i].refusal);
+        continue;
+      }
+      enter(i, make_plan(points_[i].numbers, points_[i].modes, needs_, points_[i].cutoffs));
+    }
+    for (const Group& group : groups_) run_group(group);
+  }
+
+ private:
+  struct Group {
+    Planned planned;
+    std::vector<std::size_t> members;
+  };
+
+  // Looks back at the latest groups only: sweeps change slowly, and random chains hardly ever agree.
+  void enter(std::size_t index, Planned planned) {
+    constexpr std::size_t looked_at = 8;
+    const std::size_t first = groups_.size() > looked_at ? groups_.size() - looked_at : 0;
+    for (std::size_t g = groups_.size(); g > first; --g) {
+      if (groups_[g - 1].planned.plan != planned.plan) continue;
+      groups_[g - 1].members.push_back(index);
+      return;
+    }
+    groups_.push_back({std::move(planned), {index}});
+  }
+
+  void run_group(const Group& group) {
+    std::size_t i = 0;
+    for (; i + lanes <= group.members.size(); i += lanes) run_lanes(group, i);
+    for (; i < group.members.size(); ++i) {
+      finish(group.members[i], attempt<double>(points_[group.members[i]], group.planned, quantities_));
+    }
+  }
+
+  void run_lanes(const Group& group, std::size_t first) {
+    std::vector<const LinkModes<DoubleDouble>*> modes;
+    for (std::size_t i = 0; i < lanes; ++i) modes.push_back(&points_[group.members[first + i]].modes.modes);
+    const KernelResult<Lanes<4>> results = run_kernel(group.planned.plan, rounded_modes<Lanes<4>>(modes));
+    for (std::size_t i = 0; i < lanes; ++i) {
+      const std::size_t index = group.members[first + i];
+      const EndMode<double> right = rounded_modes<double>({modes[i]}).right;
+      const Sums sums =
+          sums_of(lane_result(results, static_cast<int>(i)), group.planned, right, unit_of<double>(points_[index]));
+      finish(index, form_values(*points_[index].chain, sums, quantities_));
+    }
+  }
+
+  void finish(std::size_t index, Formed formed) {
+    answers_[index] = improve(std::move(formed), points_[index], needs_, quantities_).values;
+  }
+
+  static constexpr std::size_t lanes = 4;
+  const std::vector<Quantity>& quantities_;
+  Needs needs_;
+  std::vector<Value>* answers_;
+  std::vector<Point> points_;
+  std::vector<Group> groups_;
+};
+
+constexpr std::size_t block_size = 64;
+
+}  // namespace
+
+std::vector<Value> evaluate(const model::Chain& chain, const std::vector<Quantity>& quantities,
+                            const std::optional<model::Pattern>&) {
+  std::vector<Value> answer;
+  Block(std::span(&chain, 1), quantities, &answer).run();
+  return answer;
+}
+
+std::vector<std::vector<Value>> evaluate_all(std::span<const model::Chain> chains,
+                                             const std::vector<Quantity>& quantities,
+                                             const std::optional<model::Pattern>&, unsigned threads) {
+  std::vector<std::vector<Value>> answers(chains.size());
+  const std::size_t blocks = (chains.size() + block_size - 1) / block_size;
+  const auto run_block = [&](std::size_t block) {
+    const std::size_t first = block * block_size;
+    const std::size_t count = std::min(block_size, chains.size() - first);
+    Block(chains.subspan(first, count), quantities, answers.data() + first).run();
+  };
+  tbb::task_arena arena(threads == 0 ? tbb::task_arena::automatic : static_cast<int>(threads));
+  arena.execute([&] { tbb::parallel_for(std::size_t{0}, blocks, run_block); });
+  return answers;
 }
 
 }  // namespace heraldgauge::fast

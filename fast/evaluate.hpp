@@ -1,6 +1,6 @@
 #pragma once
-// The entry of the fast evaluator: the quantities of a chain in binary64, each with a bound on its own error. Written from
-// the model alone; nothing here is shared with the reference evaluator except the chain.
+// The entry of the fast evaluator: the quantities of a chain in binary64, each with a bound on its own error. Written
+// from the model alone; nothing here is shared with the reference evaluator except the chain.
 
 #include <optional>
 #include <span>
@@ -31,15 +31,17 @@ struct Value {
   Status status = Status::declined;
   std::string reason;
   Scaled value;
-  double relative_error_bound = 0;  // on |computed - exact| / |exact|, round-off and cut-off together; 0 for exact values
+  double relative_error_bound =
+      0;  // on |computed - exact| / |exact|, round-off and cut-off together; 0 for exact values
 };
 
-// One value a quantity, in the order asked. key_fraction and key_rate bound their error relative to gain * sifting (times
-// herald_probability for the rate) where that is larger than the value.
+// One value a quantity, in the order asked. key_fraction and key_rate bound their error relative to gain * sifting
+// (times herald_probability for the rate) where that is larger than the value.
 std::vector<Value> evaluate(const model::Chain& chain, const std::vector<model::Quantity>& quantities,
                             const std::optional<model::Pattern>& pattern = std::nullopt);
 
-// The same for many chains, on `threads` threads (0: as many as the machine has). The answer does not depend on `threads`.
+// The same for many chains, on `threads` threads (0: as many as the machine has). The answer does not depend on
+// `threads`.
 std::vector<std::vector<Value>> evaluate_all(std::span<const model::Chain> chains,
                                              const std::vector<model::Quantity>& quantities,
                                              const std::optional<model::Pattern>& pattern, unsigned threads);

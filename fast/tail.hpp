@@ -1,0 +1,71 @@
+#pragma once
+// An upper bound on what the cut-offs leave out (the model's third bound, summed over the number of pairs). Every
+// station whose two sources are within their cut-offs keeps its operator, bounded by its largest row sum e(n,n'); every
+// other place is replaced by w, an upper bound of P(outcome | pair numbers) that knows no interference, so that only
+// Delta = 0 is left.
+
+#include <vector>
+
+#include "fast/plan.hpp"
+
+namespace heraldgauge::fast {
+
+// min(1, D + e): r detectors are required to click, each by a photon or a dark event.
+template <class R>
+R two_clicks_bound(const R& dark, const R& first, const R& second) {
+  const R one(1.0);
+  return dark * dark + R(2.0) * dark * smaller(one, first) + smaller(one, second);
+}
+
+// w of a station for n_r and n_l photons before its arms; `patterns` is the number of click patterns accepted.
+template <class R>
+R station_bound(const R& dark, const R& tau_r, const R& tau_l, double n_r, double n_l, double patterns) {
+  const R first = R(n_r) * tau_r + R(n_l) * tau_l;
+  const R second =
+      R(n_r * (n_r - 1) / 2) * tau_r * tau_r + R(n_r * n_l) * tau_r * tau_l + R(n_l * (n_l - 1) / 2) * tau_l * tau_l;
+  return smaller(R(1.0), R(patterns) * two_clicks_bound(dark, first, second));
+}
+
+// w of an end for an outcome and n photons.
+template <class R>
+R end_bound(const R& dark, const R& registering, int outcome, double n) {
+  const R one(1.0);
+  const R first = smaller(one, R(n) * registering);
+  switch (outcome) {
+    case silent_both:
+      return one;
+    case both_click:
+      return smaller(one, two_clicks_bound(dark, first, R(n * (n - 1) / 2) * registering * registering));
+    case bit_plus:
+    case bit_cross:
+      return smaller(one, R(2.0) * dark + first);
+    default:
+      return smaller(one, dark + first);
+  }
+}
+
+// The number of click patterns that a list of terms accepts.
+inline double pattern_count(const std::vector<Term>& terms) {
+  double count = 0;
+  for (const Term& term : terms) count += (term.h == 2 ? 2 : 1) * (term.v == 2 ? 2 : 1);
+  return count;
+}
+
+// Ratio of successive dropped weights of a source from cutoff + 1 on, both neighbours included (each requires at most
+// two clicks); the sum of them is at most the first over 1 - ratio.
+template <class R>
+R dropped_ratio(const R& lam, int cutoff) {
+  const double first = cutoff + 1;
+  const double growth = (first + 1) / (first - 1);
+  return lam * R((first + 2) / (first + 1) * growth * growth);
+}
+
+// Bound on what is left out after some source, for one left outcome: an earlier source beyond its cut-off and the
+// present one within, by its pair number; and the present one beyond.
+template <class R>
+struct Dropped {
+  std::vector<R> within;
+  R beyond = R(0.0);
+};
+
+}  // namespace heraldgauge::fast
