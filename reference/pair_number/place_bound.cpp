@@ -6,7 +6,6 @@ namespace heraldgauge::reference::pair_number {
 
 PlaceBound::PlaceBound(const StationPlace& station, Precision bits)
     : bits_(bits),
-      eta_(bits),
       first_transmittance_(enclose(station.first_transmittance, bits)),
       second_transmittance_(enclose(station.second_transmittance, bits)) {
   const auto& detectors = station.station.detectors;
@@ -19,7 +18,7 @@ PlaceBound::PlaceBound(const StationPlace& station, Precision bits)
 }
 
 PlaceBound::PlaceBound(const EndPlace& end, const EndAsk& ask, Precision bits)
-    : bits_(bits), eta_(bits), first_transmittance_(enclose(end.transmittance, bits)), second_transmittance_(bits) {
+    : bits_(bits), first_transmittance_(enclose(end.transmittance, bits)), second_transmittance_(bits) {
   const auto& detectors = end.end.detectors;
   add_pattern({{detectors.begin(), detectors.end()}, {ask.begin(), ask.end()}, end.end.background, 2});
 }
@@ -27,22 +26,27 @@ PlaceBound::PlaceBound(const EndPlace& end, const EndAsk& ask, Precision bits)
 void PlaceBound::add_pattern(const DetectorGroup& group) {
   for (const DarkWeight& weight : dark_weights(group, bits_)) {
     const auto order = static_cast<std::size_t>(weight.total_order());
-    while (dark_.size() <= order) dark_.emplace_back(bits_);
+    while (dark_.size() <= order) {
+      dark_.emplace_back(bits_);
+      registering_.emplace_back(bits_);
+    }
     dark_[order] += weight.weight;
-  }
-  for (std::size_t j = 0; j < group.asks.size(); ++j) {
-    if (count_variable(group.asks[j]).top == 0) continue;
-    eta_ = larger_of(eta_, enclose(group.detectors[j].registering_probability(), bits_));
+    Interval registering = weight.weight;
+    for (std::size_t j = 0; j < weight.orders.size(); ++j) {
+      const Interval eta = enclose(group.detectors[j].registering_probability(), bits_);
+      registering *= power(eta, static_cast<unsigned long>(weight.orders[j]));
+    }
+    registering_[order] += registering;
   }
 }
 
-Matrix PlaceBound::thinned(const Interval& tau, long last) const {
+Matrix PlaceBound::thinned(const Interval& transmittance, long last) const {
   Matrix table(last + 1, order() + 1, bits_);
   for (long n = 0; n <= last; ++n) {
     table(n, 0) = Interval(1L, bits_);
     for (long i = 1; i <= std::min(n, order()); ++i) {
       Interval& entry = table(n, i);
-      entry = table(n, i - 1) * tau * (n - i + 1);
+      entry = table(n, i - 1) * transmittance * (n - i + 1);
       mpfi_div_si(entry.raw(), entry.raw(), i);
     }
   }
@@ -50,8 +54,8 @@ Matrix PlaceBound::thinned(const Interval& tau, long last) const {
 }
 
 Matrix PlaceBound::table(long first_last, long second_last) const {
-  const Matrix first = thinned(eta_ * first_transmittance_, first_last);
-  const Matrix second = thinned(eta_ * second_transmittance_, second_last);
+  const Matrix first = thinned(first_transmittance_, first_last);
+  const Matrix second = thinned(second_transmittance_, second_last);
   const Interval one(1L, bits_);
   Interval scratch(bits_);
   Matrix bound(first_last + 1, second_last + 1, bits_);
@@ -63,7 +67,8 @@ Matrix PlaceBound::table(long first_last, long second_last) const {
           Interval::multiply(scratch, first(n, i), second(m, t - i));
           Interval::add(moment, moment, scratch);
         }
-        bound(n, m) += dark_[static_cast<std::size_t>(t)] * smaller_of(one, moment);
+        const auto order = static_cast<std::size_t>(t);
+        bound(n, m) += smaller_of(dark_[order], registering_[order] * moment);
       }
       bound(n, m) = smaller_of(one, bound(n, m));
     }

@@ -2,10 +2,10 @@
 // w(n, n'): a bound on the probability that a place answers as asked, given the pair numbers of the sources on both
 // sides of it, whatever the state of those photons. BOUNDS.md proves it.
 //
-// With r photon events required in all, eta the largest registering probability of the detectors that need one, tau =
-// eta t of either arm, and D_t the dark probability that completes t photon events (dark_weights.hpp, all accepted
-// patterns added):
-//   w = min(1, sum_t D_t min(1, e_t)),  e_t = sum_i C(n, i) C(n', t-i) tau^i tau'^(t-i).
+// Summed over all accepted patterns and all photon orders q = (q_j), one a detector, of sum t: D_t is the dark
+// probability that completes the pattern, D'_t the same times prod_j eta_j^{q_j}, eta_j the registering probabilities.
+// With T, T' the transmittances of the two arms,
+//   w = min(1, sum_t min(D_t, D'_t e_t)),  e_t = sum_i C(n, i) C(n', t-i) T^i T'^(t-i).
 
 #include <vector>
 
@@ -29,12 +29,12 @@ class PlaceBound {
 
  private:
   void add_pattern(const DetectorGroup& group);
-  // C(n, i) tau^i, n = 0..last, i = 0..r.
-  Matrix thinned(const Interval& tau, long last) const;
+  // C(n, i) T^i, n = 0..last, i = 0..r.
+  Matrix thinned(const Interval& transmittance, long last) const;
 
   Precision bits_;
-  std::vector<Interval> dark_;  // D_t
-  Interval eta_;
+  std::vector<Interval> dark_;         // D_t
+  std::vector<Interval> registering_;  // D'_t
   Interval first_transmittance_, second_transmittance_;
 };
 
