@@ -162,6 +162,19 @@ TEST(PairNumberRoute, CoarseEntriesContainFineOnes) {
   });
 }
 
+// A right plus detector that sees next to nothing: its exchanged entries have the tail of the cross detector.
+TEST(PairNumberRoute, ExchangedEntriesHaveTheTailOfTheOtherDetector) {
+  model::Chain chain = test::alike_chain(1, "1/5", "1", "1", "0");
+  chain.stations[0].herald = model::Herald::psi_minus;
+  chain.right_end.detectors[model::plus].efficiency = Rational(1, 1000000);
+  const auto route = make_pair_number_route(chain);
+  const auto coarse = route->ends(Basis::diagonal, {96, -8}).value.joint;
+  const auto fine = route->ends(Basis::diagonal, {160, -60}).value.joint;
+  for (std::size_t left = 0; left < 4; ++left) {
+    for (std::size_t right = 0; right < 4; ++right) EXPECT_TRUE(overlap(coarse[left][right], fine[left][right]));
+  }
+}
+
 TEST(PairNumberRoute, LooksTheSameFromTheOtherEnd) {
   test::for_each_case(4, 52, [](Random& random) {
     const model::Chain chain = some_chain(random, true);
