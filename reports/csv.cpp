@@ -16,12 +16,8 @@ std::string quoted(const std::string& text) {
   return result + "\"";
 }
 
-std::string text_cell(const std::string& text) {
-  return quoted(looks_like_a_formula(text) && !model::parse_exact(text) ? "'" + text : text);
-}
-
 std::string cell_text(const Cell& cell) {
-  return std::holds_alternative<Text>(cell) ? text_cell(std::get<Text>(cell).text) : plain(cell);
+  return std::holds_alternative<Text>(cell) ? csv_text(std::get<Text>(cell).text) : plain(cell);
 }
 
 class Line {
@@ -39,19 +35,23 @@ class Line {
 
 std::string header(const Point& point) {
   Line line;
-  for (const auto& [key, value] : point.parameters) line.add(text_cell(key));
+  for (const auto& [key, value] : point.parameters) line.add(csv_text(key));
   for (const Field& field : point.rows.front()) line.add(std::string(field.name));
   return line.ended();
 }
 
 std::string row_text(const Parameters& parameters, const Row& row) {
   Line line;
-  for (const auto& [key, value] : parameters) line.add(text_cell(value));
+  for (const auto& [key, value] : parameters) line.add(csv_text(value));
   for (const Field& field : row) line.add(cell_text(field.cell));
   return line.ended();
 }
 
 }  // namespace
+
+std::string csv_text(const std::string& text) {
+  return quoted(looks_like_a_formula(text) && !model::parse_exact(text) ? "'" + text : text);
+}
 
 std::string csv(const Document& document) {
   std::string lines = header(document.points.front());
@@ -69,9 +69,9 @@ std::string csv(const ListReport& report) {
   std::string lines = head.ended();
   for (const ListEntry& entry : report.entries) {
     Line line;
-    line.add(text_cell(entry.id));
-    line.add(text_cell(entry.sentence));
-    for (const auto& [name, value] : entry.more) line.add(text_cell(value));
+    line.add(csv_text(entry.id));
+    line.add(csv_text(entry.sentence));
+    for (const auto& [name, value] : entry.more) line.add(csv_text(value));
     lines += line.ended();
   }
   return lines;

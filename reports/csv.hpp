@@ -13,4 +13,7 @@ std::string csv(const Document& document);
 
 std::string csv(const ListReport& report);
 
+// A text as one cell: in quotes where it needs them, with an apostrophe before what looks like a formula.
+std::string csv_text(const std::string& text);
+
 }  // namespace heraldgauge::reports
