@@ -13,8 +13,8 @@ namespace {
 using model::Quantity;
 using model::QuantityKind;
 
-constexpr double tail_allowed = 0x1p-48;
-constexpr double bound_allowed = 4e-13;  // beyond it the point is done again in double-double
+constexpr double tail_allowed = 5e-14;
+constexpr double bound_allowed = 9e-13;  // beyond it the point is done again in double-double
 constexpr int most_attempts = 8;
 
 // A point with everything that does not change between attempts.
@@ -46,6 +46,19 @@ Point prepare(const model::Chain& chain) {
     point.refusal = "source.pair_parameter needs more than " + std::to_string(largest_pairs) + " pairs a source";
   }
   return point;
+}
+
+// True where make_plan gives both points the same plan: it looks at nothing else.
+bool same_plan(const Point& a, const Point& b) {
+  const auto same_source = [](const SourceNumbers& x, const SourceNumbers& y) { return x.squeezed == y.squeezed; };
+  const auto same_herald = [](const StationNumbers& x, const StationNumbers& y) { return x.herald == y.herald; };
+  const auto same_end = [](const EndNumbers& x, const EndNumbers& y) {
+    return x.analyser_deg == y.analyser_deg && alike(x) == alike(y);
+  };
+  return a.cutoffs == b.cutoffs && a.modes.structure == b.modes.structure &&
+         std::ranges::equal(a.numbers.sources, b.numbers.sources, same_source) &&
+         std::ranges::equal(a.numbers.stations, b.numbers.stations, same_herald) &&
+         same_end(a.numbers.left, b.numbers.left) && same_end(a.numbers.right, b.numbers.right);
 }
 
 // One operation, and what a complement 1 - x formed in double-double may have lost.
@@ -109,7 +122,7 @@ class Block {
         answers_[i] = declined(*points_[i].chain, quantities_, points_[i].refusal);
         continue;
       }
-      enter(i, make_plan(points_[i].numbers, points_[i].modes, needs_, points_[i].cutoffs));
+      enter(i);
     }
     for (const Group& group : groups_) run_group(group);
   }
@@ -121,15 +134,16 @@ class Block {
   };
 
   // Looks back at the latest groups only: sweeps change slowly, and random chains hardly ever agree.
-  void enter(std::size_t index, Planned planned) {
+  void enter(std::size_t index) {
     constexpr std::size_t looked_at = 8;
+    const Point& point = points_[index];
     const std::size_t first = groups_.size() > looked_at ? groups_.size() - looked_at : 0;
     for (std::size_t g = groups_.size(); g > first; --g) {
-      if (groups_[g - 1].planned.plan != planned.plan) continue;
+      if (!same_plan(points_[groups_[g - 1].members.front()], point)) continue;
       groups_[g - 1].members.push_back(index);
       return;
     }
-    groups_.push_back({std::move(planned), {index}});
+    groups_.push_back({make_plan(point.numbers, point.modes, needs_, point.cutoffs), {index}});
   }
 
   void run_group(const Group& group) {

@@ -332,7 +332,7 @@ class Kernel {
     for (std::size_t s = 0; s < state.size(); ++s) {
       const bool odd = plan_.parity ? s == 1 : plan_.odd;
       const int index = odd ? pairing.right_odd : pairing.right;
-      const bool alternating = odd && pairing.right_odd != pairing.right;
+      const bool alternating = (odd && pairing.right_odd != pairing.right) != pairing.mirrored;
       add_pairing(state[s], right[static_cast<std::size_t>(index)], alternating, sum);
     }
     sum.tail =

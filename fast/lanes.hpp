@@ -12,7 +12,7 @@ struct VectorOf<4> {
 };
 
 template <int Width>
-struct Lanes {
+struct alignas(Width * sizeof(double)) Lanes {  // else 16 bytes where the compiler may not use wide registers
   using Vector = typename VectorOf<Width>::Type;
   Vector v;
 

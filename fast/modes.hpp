@@ -14,6 +14,7 @@ struct StationStructure {
   std::array<bool, 2> alike;
   bool polarisations_alike;
   bool as_before;  // numbers only; the cut-offs are compared by the plan
+  friend bool operator==(const StationStructure&, const StationStructure&) = default;
 };
 
 struct ExactModes {

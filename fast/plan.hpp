@@ -42,6 +42,8 @@ struct Pairing {
   int right;  // index into Plan::right
   // Recorded bits exchanged after an odd number of psi-: the right outcome used then, and its sectors change sign.
   int right_odd;
+  // The left outcome is the mirror image (V -> -V) of the view: sectors of odd Delta change sign.
+  bool mirrored = false;
   friend bool operator==(const Pairing&, const Pairing&) = default;
 };
 

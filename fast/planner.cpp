@@ -33,14 +33,12 @@ class Planner {
       : numbers_(numbers), modes_(modes), plan_(planned.plan), layout_(planned.layout) {}
 
   void add_stations(bool diagonal) {
-    const auto& right = numbers_.right.detectors;
-    const bool right_alike = right[0].registering == right[1].registering && right[0].dark == right[1].dark;
     const auto is = [](model::Herald herald) {
       return [herald](const StationNumbers& s) { return s.herald == herald; };
     };
     const auto& stations = numbers_.stations;
     const bool open = std::any_of(stations.begin(), stations.end(), is(model::Herald::either));
-    plan_.parity = diagonal && open && !right_alike;
+    plan_.parity = diagonal && open && !alike(numbers_.right);
     plan_.odd = std::count_if(stations.begin(), stations.end(), is(model::Herald::psi_minus)) % 2 == 1;
     for (std::size_t k = 0; k < stations.size(); ++k) {
       const StationStructure& structure = modes_.structure[k];
@@ -75,11 +73,13 @@ class Planner {
 
   void add_diagonal() {
     layout_.diagonal = static_cast<int>(plan_.pairings.size());
-    for (int l : {bit_plus, bit_cross}) {
-      for (int r : {bit_plus, bit_cross}) {
+    const bool mirror = alike(numbers_.left);  // at 45 degrees cross is then plus with V reversed
+    for (const int l : {bit_plus, bit_cross}) {
+      for (const int r : {bit_plus, bit_cross}) {
         const int opposite = r == bit_plus ? bit_cross : bit_plus;
-        plan_.pairings.push_back(
-            {view(plan_.left, 45, l, true), view(plan_.right, 45, r, true), view(plan_.right, 45, opposite, true)});
+        plan_.pairings.push_back({view(plan_.left, 45, mirror ? int{bit_plus} : l, true),
+                                  view(plan_.right, 45, r, true), view(plan_.right, 45, opposite, true),
+                                  mirror && l == bit_cross});
       }
     }
   }
@@ -155,6 +155,11 @@ std::optional<int> first_cutoff(const ChainNumbers& numbers, const ExactModes& m
 }
 
 }  // namespace
+
+bool alike(const EndNumbers& end) {
+  const auto& [plus, cross] = end.detectors;
+  return plus.registering == cross.registering && plus.dark == cross.dark;
+}
 
 Needs needs_of(const std::vector<model::Quantity>& quantities) {
   using enum model::QuantityKind;

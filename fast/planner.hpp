@@ -20,6 +20,9 @@ struct Layout {
   int visibility_left = -1;    // left view
 };
 
+// Both detectors of an end have the same numbers.
+bool alike(const EndNumbers& end);
+
 struct Needs {
   bool rectilinear = false;
   bool analyser = false;

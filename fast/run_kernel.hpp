@@ -7,6 +7,8 @@ namespace heraldgauge::fast {
 
 template <class T>
 KernelResult<T> run_kernel(const Plan& plan, const LinkModes<T>& modes);
+template <>
+KernelResult<Lanes<4>> run_kernel(const Plan& plan, const LinkModes<Lanes<4>>& modes);
 
 // One lane of a result.
 inline KernelResult<double> lane_result(const KernelResult<Lanes<4>>& all, int lane) {

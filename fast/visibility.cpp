@@ -102,10 +102,10 @@ template <class T>
 Contracted<T> contracted(const VisibilityInput<T>& input, double phi) {
   constexpr double degrees_per_radian = 180 / pi;
   const model::Rational degrees(phi == pi ? 90.0 : phi / 2 * degrees_per_radian);
-  const Rotation table(reduced_angle(degrees), input.vector->cutoff());
+  const auto table = rotation(reduced_angle(degrees), input.vector->cutoff());
   Contracted<T> result;
-  Kernel<T>::add_pairing(*input.vector, raised_end(input, table, only_plus), false, result.full);
-  Kernel<T>::add_pairing(*input.vector, raised_end(input, table, contrast), false, result.contrast_part);
+  Kernel<T>::add_pairing(*input.vector, raised_end(input, *table, only_plus), false, result.full);
+  Kernel<T>::add_pairing(*input.vector, raised_end(input, *table, contrast), false, result.contrast_part);
   return result;
 }
 

@@ -118,9 +118,7 @@ TEST(FastEvaluate, BytesDoNotDependOnCompanyOrThreads) {
   for (std::size_t i = 0; i < chains.size(); ++i) {
     chains[i].left_arms[0].transmittance = Rational(static_cast<long>(100 + i), 1000);
   }
-  const std::vector<Quantity> quantities = {{QuantityKind::herald_probability}, {QuantityKind::gain},
-                                            {QuantityKind::qber_diagonal},      {QuantityKind::visibility},
-                                            {QuantityKind::key_rate},           {QuantityKind::capacity_point}};
+  const std::vector<Quantity> quantities = model::all_quantities(false);
   const auto together = evaluate_all(chains, quantities, std::nullopt, 1);
   const auto threaded = evaluate_all(chains, quantities, std::nullopt, 2);
   for (std::size_t i = 0; i < chains.size(); ++i) {
