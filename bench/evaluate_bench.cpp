@@ -74,7 +74,7 @@ void all_quantities_batch(benchmark::State& state) {
 }
 BENCHMARK(all_quantities_batch)->Unit(benchmark::kMicrosecond);
 
-// One probability; 10 million terms at 6 pairs would be cut per mode, here n_k <= 6 gives 28^4 = 0.6 million.
+// One probability, terms with every n_k up to the argument: at 6, 28^4 = 0.6 million.
 void herald_by_number_conserving_sum(benchmark::State& state) {
   double herald = 0;
   for (auto _ : state) herald = number_conserving_sum(trunk3, static_cast<int>(state.range(0)));
