@@ -16,8 +16,11 @@ constexpr const char* examples =
     "  heraldgauge enclose link.toml --certificate how.json\n"
     "  heraldgauge enclose link.toml --set chain.stations=3 --set station.detector.efficiency=0.2\n"
     "  heraldgauge quick link.toml --format csv --output table.csv\n"
+    "  heraldgauge audit table.csv link.toml               judge the numbers of a table\n"
     "  heraldgauge list keys                               what a scenario may say\n"
-    "Exit status: 0 done, 2 input or usage at fault, 3 a value could not be certified, 4 the machine failed.\n";
+    "Exit status: 0 done, 1 a number differs or is impossible, 2 input or usage at fault, 3 a value could not be "
+    "certified, "
+    "4 the machine failed.\n";
 
 void add_output_options(CLI::App& command, Arguments& into) {
   command.add_option("--format", into.format, "text, json or csv")->type_name("FORMAT")->capture_default_str();
@@ -55,6 +58,20 @@ void add_quick(CLI::App& app, Arguments& into) {
   add_scenario_options(command, into);
 }
 
+void add_audit(CLI::App& app, Arguments& into) {
+  CLI::App& command = *app.add_subcommand("audit", "Judge a table of somebody else's numbers and name likely causes.");
+  command.add_option("RESULTS", into.audit.results, "table of results (CSV or JSON); - is standard input")->required();
+  add_scenario_options(command, into);
+  command.add_option("--relative", into.audit.relative, "relative error that is accepted")->type_name("R");
+  command.add_option("--absolute", into.audit.absolute, "absolute error that is accepted")->type_name("A");
+  command.add_flag("--as-printed", into.audit.as_printed, "accept half a unit of the last printed digit only");
+  command.add_option("--digitised", into.audit.digitised, "reading tolerances of a curve from print: 0.5,2%")
+      ->type_name("X,Y");
+  command.add_option("--budget", into.audit.budget, "accepted errors by quantity (TOML)")->type_name("FILE");
+  command.add_option("--ci-results", into.audit.ci_results, "write test results as XML for a CI system")
+      ->type_name("FILE");
+}
+
 void add_list(CLI::App& app, Arguments& into) {
   CLI::App& command = *app.add_subcommand("list", "What there is, with a sentence each.");
   command.add_option("SUBJECT", into.list_subject, "quantities, shortcuts, conventions or keys")->required();
@@ -86,6 +103,7 @@ std::variant<Arguments, Stop> parse_arguments(int count, const char* const* valu
   add_enclose(app, arguments);
   add_quick(app, arguments);
   add_list(app, arguments);
+  add_audit(app, arguments);
   try {
     app.parse(count, values);
   } catch (const CLI::ParseError& reason) {

@@ -10,8 +10,19 @@
 
 namespace heraldgauge::cli {
 
+// What only `audit` takes.
+struct AuditArguments {
+  std::string results;
+  std::optional<std::string> relative;
+  std::optional<std::string> absolute;
+  bool as_printed = false;
+  std::optional<std::string> digitised;
+  std::optional<std::string> budget;
+  std::optional<std::string> ci_results;
+};
+
 struct Arguments {
-  std::string command;  // enclose | quick | list
+  std::string command;  // enclose | quick | list | audit
   std::string scenario;
   std::vector<std::string> quantities;
   std::vector<std::string> assignments;  // KEY=VALUE
@@ -23,6 +34,7 @@ struct Arguments {
   bool exact = false;
   std::optional<std::string> certificate;
   std::string list_subject;
+  AuditArguments audit;
 };
 
 // What to print instead of running a command: help or version for standard output, a usage fault for standard error.

@@ -1,5 +1,6 @@
 #include "compare/cli/options.hpp"
 
+#include "compare/cli/audit.hpp"
 #include "reference/model/exact_number.hpp"
 #include "reference/model/reading/keys.hpp"
 
@@ -80,6 +81,19 @@ void refuse_two_documents_in_one_place(const Arguments& arguments, Faults& fault
   if (arguments.certificate == arguments.output) {
     faults.push_back(fault_of("--certificate", "it would go to the same place as the answer", "another FILE"));
   }
+  if (arguments.audit.ci_results == arguments.output) {
+    faults.push_back(fault_of("--ci-results", "it would go to the same place as the answer", "another FILE"));
+  }
+}
+
+compare::Rule rule_given(const Arguments& arguments, Faults& faults) {
+  if (arguments.audit.results == "-" && arguments.scenario == "-") {
+    faults.push_back(fault_of("audit", "RESULTS and SCENARIO are both standard input", "one of them a file"));
+  }
+  const auto rule = rule_of(arguments.audit);
+  if (rule) return *rule;
+  faults.insert(faults.end(), rule.faults().begin(), rule.faults().end());
+  return {};
 }
 
 }  // namespace
@@ -89,9 +103,10 @@ model::Expected<Options> resolve_options(const Arguments& arguments) {
   Faults faults;
   options.format = format_named(arguments.format, faults);
   options.assignments = assignments_of(arguments.assignments, faults);
-  options.enclose.quantities = options.quick.quantities = quantities_named(arguments.quantities, faults);
+  options.enclose.quantities = options.quick.quantities = options.audit.quantities =
+      quantities_named(arguments.quantities, faults);
   if (arguments.threads) {
-    options.enclose.threads = options.quick.threads =
+    options.enclose.threads = options.quick.threads = options.audit.threads =
         static_cast<unsigned>(whole_number("--threads", *arguments.threads, largest_thread_count, 1, faults));
   }
   options.enclose.digits =
@@ -99,6 +114,7 @@ model::Expected<Options> resolve_options(const Arguments& arguments) {
   if (arguments.route) options.enclose.route = route_named(*arguments.route, faults);
   options.enclose.exact = arguments.exact;
   options.enclose.with_certificate = arguments.certificate.has_value();
+  if (arguments.command == "audit") options.audit.rule = rule_given(arguments, faults);
   if (arguments.command == "list") options.list_subject = subject_named(arguments.list_subject, faults);
   refuse_two_documents_in_one_place(arguments, faults);
   if (!faults.empty()) return faults;

@@ -3,6 +3,7 @@
 
 #include <vector>
 
+#include "compare/audit_command.hpp"
 #include "compare/cli/arguments.hpp"
 #include "compare/enclose_command.hpp"
 #include "compare/list_command.hpp"
@@ -18,6 +19,7 @@ struct Options {
   std::vector<model::Assignment> assignments;
   compare::EncloseOptions enclose;
   compare::QuickOptions quick;
+  compare::AuditOptions audit;
   compare::ListSubject list_subject = compare::ListSubject::quantities;
 };
 

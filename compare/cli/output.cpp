@@ -9,6 +9,7 @@
 #include <cstdio>
 #include <cstdlib>
 #include <cstring>
+#include <utility>
 
 namespace heraldgauge::cli {
 namespace {
@@ -22,7 +23,7 @@ std::string failure(const std::string& name) {
 }
 
 // 0, or -1 with errno set.
-int write_all(int descriptor, const std::string& text) {
+int write_piece(int descriptor, const std::string& text) {
   std::size_t done = 0;
   while (done < text.size()) {
     const ssize_t count = write(descriptor, text.data() + done, text.size() - done);
@@ -33,14 +34,21 @@ int write_all(int descriptor, const std::string& text) {
   return 0;
 }
 
-std::string write_to_standard_output(const std::string& text) {
-  return write_all(STDOUT_FILENO, text) == 0 || errno == EPIPE ? "" : failure("-");
+int write_all(int descriptor, const NextPiece& next) {
+  for (std::string piece = next(); !piece.empty(); piece = next()) {
+    if (write_piece(descriptor, piece) != 0) return -1;
+  }
+  return 0;
 }
 
-std::string write_to_device(const std::string& name, const std::string& text) {
+std::string write_to_standard_output(const NextPiece& next) {
+  return write_all(STDOUT_FILENO, next) == 0 || errno == EPIPE ? "" : failure("-");
+}
+
+std::string write_to_device(const std::string& name, const NextPiece& next) {
   const int descriptor = open(name.c_str(), O_WRONLY | O_NOFOLLOW | O_CLOEXEC | O_NOCTTY);
   if (descriptor < 0) return failure(name);
-  const std::string message = write_all(descriptor, text) == 0 ? "" : failure(name);
+  const std::string message = write_all(descriptor, next) == 0 ? "" : failure(name);
   close(descriptor);
   return message;
 }
@@ -53,12 +61,12 @@ mode_t mode_for(const std::string& name) {
   return new_file_mode & ~mask;
 }
 
-std::string write_to_file(const std::string& name, const std::string& text) {
+std::string write_to_file(const std::string& name, const NextPiece& next) {
   std::string temporary = name + ".XXXXXX";
   const mode_t mode = mode_for(name);
   const int descriptor = mkostemp(temporary.data(), O_CLOEXEC);
   if (descriptor < 0) return failure(name);
-  const bool written = fchmod(descriptor, mode) == 0 && write_all(descriptor, text) == 0 && fsync(descriptor) == 0;
+  const bool written = fchmod(descriptor, mode) == 0 && write_all(descriptor, next) == 0 && fsync(descriptor) == 0;
   std::string message = written ? "" : failure(name);
   if (close(descriptor) != 0 && message.empty()) message = failure(name);
   if (message.empty() && rename(temporary.c_str(), name.c_str()) != 0) message = failure(name);
@@ -88,16 +96,21 @@ std::optional<model::Fault> output_fault(const std::string& option, const std::s
   if (S_ISLNK(existing.st_mode)) return fault("is a symbolic link");
   if (S_ISCHR(existing.st_mode)) return std::nullopt;
   if (!S_ISREG(existing.st_mode)) return fault("is not a regular file");
-  if (is_same_file(existing, input)) return fault("is the scenario itself");
+  if (is_same_file(existing, input)) return fault("is an input of this run");
   return std::nullopt;
 }
 
-std::string write_output(const std::string& name, const std::string& text) {
-  if (name == "-") return write_to_standard_output(text);
-  return is_character_device(name) ? write_to_device(name, text) : write_to_file(name, text);
+std::string write_output(const std::string& name, const NextPiece& next) {
+  if (name == "-") return write_to_standard_output(next);
+  return is_character_device(name) ? write_to_device(name, next) : write_to_file(name, next);
 }
 
-void write_message(const std::string& line) { static_cast<void>(write_all(STDERR_FILENO, line + "\n")); }
+std::string write_output(const std::string& name, const std::string& text) {
+  bool given = false;
+  return write_output(name, [&] { return std::exchange(given, true) ? std::string() : text; });
+}
+
+void write_message(const std::string& line) { static_cast<void>(write_piece(STDERR_FILENO, line + "\n")); }
 
 std::optional<int> terminal_columns() {
   struct winsize size;

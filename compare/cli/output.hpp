@@ -1,6 +1,7 @@
 #pragma once
 // Writing answers: to standard output, or to a file that either appears complete or stays as it was.
 
+#include <functional>
 #include <optional>
 #include <string>
 
@@ -16,6 +17,10 @@ std::optional<model::Fault> output_fault(const std::string& option, const std::s
 // Writes all of `text`; a file is written under a temporary name beside it and then renamed. What went wrong where the
 // machine failed, empty where it is written. A reader that closed its end of a pipe is no failure.
 std::string write_output(const std::string& name, const std::string& text);
+
+// The same for a text that comes in pieces: `next` gives them in turn, an empty one at the end.
+using NextPiece = std::function<std::string()>;
+std::string write_output(const std::string& name, const NextPiece& next);
 
 // Writes one line to standard error.
 void write_message(const std::string& line);

@@ -1,5 +1,6 @@
 #include "compare/cli/run.hpp"
 
+#include "compare/cli/audit.hpp"
 #include "compare/cli/input.hpp"
 #include "compare/cli/options.hpp"
 #include "compare/cli/output.hpp"
@@ -51,15 +52,24 @@ model::Expected<model::Scenario> scenario_of(const Arguments& arguments, const O
   return model::read_scenario(*text, arguments.scenario, options.assignments);
 }
 
-// Faults of the places to write to, found before anything is computed.
+// Faults of the places to write to, found before anything is computed. None may be the scenario or the table judged.
 model::Faults output_faults(const Arguments& arguments) {
   model::Faults faults;
-  if (const auto fault = output_fault("--output", arguments.output, arguments.scenario)) faults.push_back(*fault);
-  if (!arguments.certificate) return faults;
-  if (const auto fault = output_fault("--certificate", *arguments.certificate, arguments.scenario)) {
-    faults.push_back(*fault);
-  }
+  const auto judge = [&](const std::string& option, const std::optional<std::string>& name) {
+    if (!name) return;
+    for (const std::string& input : {arguments.scenario, arguments.audit.results}) {
+      const auto fault = input.empty() ? std::nullopt : output_fault(option, *name, input);
+      if (fault) return faults.push_back(*fault);
+    }
+  };
+  judge("--output", arguments.output);
+  judge("--certificate", arguments.certificate);
+  judge("--ci-results", arguments.audit.ci_results);
   return faults;
+}
+
+AuditRun audit_run_of(const Arguments& arguments, const Options& options) {
+  return {arguments.audit.results, arguments.output, arguments.audit.ci_results, options.format, options.audit};
 }
 
 }  // namespace
@@ -72,6 +82,7 @@ ExitStatus run(const Arguments& arguments) {
   if (arguments.command == "list") return deliver(arguments, *options, compare::list_command(options->list_subject));
   const auto scenario = scenario_of(arguments, *options);
   if (!scenario) return refuse(scenario.faults());
+  if (arguments.command == "audit") return run_audit(audit_run_of(arguments, *options), *scenario);
   return arguments.command == "enclose" ? run_enclose(arguments, *options, *scenario)
                                         : run_quick(arguments, *options, *scenario);
 }
