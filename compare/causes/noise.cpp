@@ -14,6 +14,7 @@ namespace {
 using model::QuantityKind;
 
 constexpr std::size_t least_numbers = 8;
+constexpr double most_trials = 1e11;         // nobody simulates more
 constexpr double farthest = 4.5;             // standard deviations; a sample of hundreds hardly goes further
 constexpr double largest_correlation = 0.5;  // between neighbours
 constexpr double least_within_one = 0.45;    // share of a normal sample within one standard deviation is 0.68
@@ -79,7 +80,7 @@ std::vector<Hypothesis> shot_sampling(const Data& data) {
   if (scaled.size() < least_numbers || squares == 0) return {};
   const double trials = static_cast<double>(scaled.size()) / squares;
   for (double& one : scaled) one *= std::sqrt(trials);
-  if (trials < 1 || !looks_normal(scaled)) return {};
+  if (trials < 1 || trials > most_trials || !looks_normal(scaled)) return {};
   Hypothesis found;
   found.parts = {{"shot-sampling", "shortcut", fmt::format("about {:.2g} trials", trials),
                   "Numbers scatter as shares of a finite number of simulated trials do."}};
