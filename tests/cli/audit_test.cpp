@@ -5,6 +5,7 @@
 #include <nlohmann/json.hpp>
 
 #include "tests/cli/program.hpp"
+#include "tests/support/json_schema.hpp"
 
 namespace heraldgauge::test {
 namespace {
@@ -62,11 +63,25 @@ TEST(AuditCommand, WritesJsonAndCiResults) {
       audit("gain,colour\n0.75,red\n0.5,blue\n", {"--format", "json", "--ci-results", folder.file("ci.xml")});
   EXPECT_EQ(result.status, 1);
   EXPECT_NE(result.err.find("the column 'colour' is not used"), std::string::npos) << result.err;
+  EXPECT_EQ(schema_faults("audit", result.out), "");
   const auto json = nlohmann::json::parse(result.out);
   EXPECT_EQ(json["points"][1]["results"][0]["verdict"], "differs");
   EXPECT_EQ(json["points"][1]["results"][0]["lower"], "0.75");
   EXPECT_EQ(json["summary"]["rows"], 2);
   EXPECT_NE(contents_of(folder.file("ci.xml")).find("tests=\"2\" failures=\"1\""), std::string::npos);
+}
+
+TEST(AuditCommand, WritesEveryVerdictByItsSchema) {
+  const std::string table =
+      "source.pair_parameter,gain,key_rate,qber_diagonal\n0.5,0.75,0,0.3\n0.25,0.1,nan,0.1\n0,0.5,3,x\n0.1,,9,0.5\n";
+  const std::string lossy = scenario + "[override]\n\"arm.0.left.transmittance\" = 0.5\n";
+  const ProcessResult result = audit(table, {"--format", "json"}, lossy);
+  EXPECT_EQ(result.status, 1);
+  EXPECT_EQ(schema_faults("audit", result.out), "");
+  const auto json = nlohmann::json::parse(result.out);
+  EXPECT_EQ(json["points"][2]["results"][1]["verdict"], "impossible");
+  EXPECT_EQ(json["summary"]["verdicts"]["impossible"], 2);
+  EXPECT_EQ(json["summary"]["verdicts"]["unreadable"], 3);
 }
 
 }  // namespace
