@@ -36,10 +36,12 @@ std::vector<Hypothesis> all_hypotheses(const Data& data, unsigned threads) {
   return all;
 }
 
-bool comes_before(const Hypothesis& a, const Hypothesis& b) {
+// Explanations of equal worth keep the order of the registries. Those that explain everything are of equal worth: what
+// is left of their residuals is the rounding of the table.
+bool comes_before(const Data& data, const Hypothesis& a, const Hypothesis& b) {
   if (a.score.explained != b.score.explained) return a.score.explained > b.score.explained;
   if (a.complexity != b.complexity) return a.complexity < b.complexity;
-  return a.score.residual < b.score.residual;
+  return !explains_everything(data, a.score) && a.score.residual < b.score.residual;
 }
 
 std::vector<bool> explained_set(const Data& data, const Hypothesis& hypothesis) {
@@ -112,7 +114,8 @@ CausesFound find_causes(const Sample& sample, const Subject& subject, unsigned t
   if (!sample.any_wrong()) return {};
   const Data data = data_of(sample.data(), subject);
   std::vector<Hypothesis> hypotheses = all_hypotheses(data, threads);
-  std::stable_sort(hypotheses.begin(), hypotheses.end(), comes_before);
+  std::stable_sort(hypotheses.begin(), hypotheses.end(),
+                   [&](const Hypothesis& a, const Hypothesis& b) { return comes_before(data, a, b); });
   CausesFound found;
   for (const Group& group : groups_of(data, hypotheses)) {
     if (found.causes.size() >= most_causes) break;
