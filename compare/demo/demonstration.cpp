@@ -6,7 +6,7 @@
 #include "compare/points.hpp"
 #include "compare/shortcuts/subset_sum_binary64.hpp"
 #include "reference/arithmetic/decimal.hpp"
-#include "reference/closed_form/ma_fung_lo_2007.hpp"
+#include "reference/closed_form/direct_pair_link.hpp"
 #include "reference/enclose.hpp"
 
 namespace heraldgauge::compare {
@@ -77,11 +77,12 @@ Expected<reports::ComparisonReport> against_subset_sum(const model::Scenario& sc
 Expected<reports::ComparisonReport> against_published_gain(const model::Scenario& scenario) {
   const auto chain = model::chain_at(scenario, 0);
   if (!chain) return chain.faults();
-  const auto link = reference::pair_link_of(*chain);
+  const reference::Field<reference::Interval> field{closed_form_bits};
+  const auto link = reference::closed_form::direct_pair_link_of(field, *chain);
   if (!link) return link.faults();
   const auto exact = certified(*chain, {Quantity{QuantityKind::gain}});
   if (!exact) return exact.faults();
-  const Rational published = reference::gain(*link, closed_form_bits).lower();
+  const Rational published = reference::closed_form::gain(field, *link).lower();
   const std::string printed = reference::decimal(published, digits + 2, reference::Direction::nearest);
   return reports::ComparisonReport{scenario.title, {{{}, {row_for(exact->front(), printed, published)}}}};
 }

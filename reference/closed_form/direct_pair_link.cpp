@@ -33,7 +33,33 @@ Number error_from(const Field<Number>& field, const DirectPairLink<Number>& link
   return half * events - field(2L) * (half - link.flip) * signal;
 }
 
+bool is_plain(const model::End& end) {
+  return end.detectors[0] == end.detectors[1] && end.detectors[0].kind == model::DetectorKind::threshold &&
+         end.background.photons.is_zero();
+}
+
 }  // namespace
+
+template <class Number>
+model::Expected<DirectPairLink<Number>> direct_pair_link_of(const Field<Number>& field, const model::Chain& chain) {
+  const bool direct = chain.stations.empty() && chain.sources.front().kind == model::SourceKind::squeezed;
+  if (!direct || !is_plain(chain.left_end) || !is_plain(chain.right_end)) {
+    return model::Fault{{},
+                        "the chain is not a direct pair link",
+                        "no station, a squeezed source, two alike threshold detectors at each end, no background"};
+  }
+  const auto registered = [&](const model::End& end, const model::Arm& arm) {
+    return field(arm.transmittance * end.detectors[0].registering_probability());
+  };
+  const auto no_dark = [&](const model::End& end) { return field(model::Real(1) - end.detectors[0].dark_probability); };
+  const model::Real lam = chain.sources.front().pair_parameter;
+  return DirectPairLink<Number>{field(lam / (model::Real(1) - lam)),
+                                registered(chain.left_end, chain.left_arms.front()),
+                                registered(chain.right_end, chain.right_arms.front()),
+                                no_dark(chain.left_end),
+                                no_dark(chain.right_end),
+                                field(0L)};
+}
 
 template <class Number>
 Number gain(const Field<Number>& field, const DirectPairLink<Number>& link) {
@@ -85,6 +111,9 @@ Number error_yield_printed(const Field<Number>& field, const DirectPairLink<Numb
   }
   return error_from<Number>(field, link, yield(field, link, n), difference / field(static_cast<long>(n) + 1));
 }
+
+template model::Expected<DirectPairLink<Interval>> direct_pair_link_of(const Field<Interval>&, const model::Chain&);
+template model::Expected<DirectPairLink<Rational>> direct_pair_link_of(const Field<Rational>&, const model::Chain&);
 
 template Interval gain(const Field<Interval>&, const DirectPairLink<Interval>&);
 template Interval error_gain_printed(const Field<Interval>&, const DirectPairLink<Interval>&);

@@ -10,6 +10,8 @@
 // rational.
 
 #include "reference/arithmetic/field.hpp"
+#include "reference/model/chain.hpp"
+#include "reference/model/fault.hpp"
 
 namespace heraldgauge::reference::closed_form {
 
@@ -21,6 +23,11 @@ struct DirectPairLink {
   Number no_dark_a, no_dark_b;
   Number flip;  // e_d: probability that misalignment flips the bit of a signal event
 };
+
+// The letters for a chain, without misalignment. Faults unless it has no station, a squeezed source, and at each end
+// two alike threshold detectors with no shared background.
+template <class Number>
+model::Expected<DirectPairLink<Number>> direct_pair_link_of(const Field<Number>& field, const model::Chain& chain);
 
 // Q: at least one click on each side, per pump pulse. Verified; equal to the model's `gain` without stations, with
 // alike detectors within each end.

@@ -22,8 +22,10 @@ const std::vector<model::Quantity> herald_and_errors = {{QuantityKind::herald_pr
 
 TEST(RouteChoice, TakesDeterminantsForShortChainsAndPairNumbersForLongOnes) {
   const Request request = asking(herald_and_errors);
-  EXPECT_EQ(choose_route(test::alike_chain(2, "1/100", "1/10", "1/2", "1/1000000"), request).value(), RouteName::determinant);
-  EXPECT_EQ(choose_route(test::alike_chain(40, "1/100", "1/10", "1/2", "1/1000000"), request).value(), RouteName::pair_number);
+  EXPECT_EQ(choose_route(test::alike_chain(2, "1/100", "1/10", "1/2", "1/1000000"), request).value(),
+            RouteName::determinant);
+  EXPECT_EQ(choose_route(test::alike_chain(40, "1/100", "1/10", "1/2", "1/1000000"), request).value(),
+            RouteName::pair_number);
 }
 
 TEST(RouteChoice, TakesPairNumbersWhereDeterminantsCannotServe) {
