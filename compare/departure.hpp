@@ -4,6 +4,7 @@
 // of the exact values.
 
 #include <functional>
+#include <memory>
 #include <optional>
 #include <string>
 #include <utility>
@@ -14,6 +15,10 @@
 #include "reference/model/scenario.hpp"
 
 namespace heraldgauge::compare {
+
+namespace fock {
+struct Recipe;
+}
 
 // One point: the settings in force and the chain that they resolve to.
 struct Case {
@@ -45,6 +50,7 @@ struct Value {
   fast::Status status = fast::Status::declined;
   std::string reason;
   fast::Scaled value;
+  std::string effort{};  // of a sample: what it took and how far it got; else empty
 };
 
 // The same as a certified enclosure of what its formula gives.
@@ -54,6 +60,11 @@ struct CertifiedValue {
   std::string reason;
   std::optional<reference::Enclosure> enclosure;  // present exactly where computed
 };
+
+// An evaluator of cases, in binary64 and with certificates.
+using Evaluator = std::function<std::vector<Value>(const Case&, const std::vector<model::Quantity>&)>;
+using CertifiedEvaluator =
+    std::function<std::vector<CertifiedValue>(const Case&, const std::vector<model::Quantity>&, int digits)>;
 
 enum class DepartureKind { shortcut, convention };
 
@@ -79,6 +90,15 @@ struct Departure {
 
   // Where it only changes the inputs: the case whose exact values it gives.
   std::function<model::Expected<Case>(const Case&)> transform;
+
+  // Where the explicit Fock evaluator serves it: how (fock/departure.hpp).
+  std::shared_ptr<const fock::Recipe> recipe;
+
+  // Where it only works on values: its values from those of another evaluator, so that it can be laid over a departure.
+  std::function<std::vector<Value>(const Case&, const std::vector<model::Quantity>&, const Evaluator& inner)> rework;
+  std::function<std::vector<CertifiedValue>(const Case&, const std::vector<model::Quantity>&,
+                                            const CertifiedEvaluator& inner, int digits)>
+      certified_rework;
 };
 
 // The setting to use: the one given where it is allowed, the standard one where none is given, a fault else.

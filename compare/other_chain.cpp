@@ -7,7 +7,7 @@ using model::Quantity;
 std::vector<Value> values_of(const Case& point, const std::vector<Quantity>& quantities) {
   std::vector<Value> values;
   for (fast::Value& value : fast::evaluate(point.chain, quantities, point.pattern)) {
-    values.push_back({value.quantity, value.status, std::move(value.reason), value.value});
+    values.push_back({value.quantity, value.status, std::move(value.reason), value.value, ""});
   }
   return values;
 }
@@ -18,10 +18,15 @@ std::vector<CertifiedValue> certified_values_of(const Case& point, const std::ve
   request.quantities = quantities;
   request.pattern = point.pattern;
   request.digits = digits;
+  request.intervals_only = true;
   const auto results = reference::enclose(point.chain, request);
   if (!results) return declined_certified(quantities, in_words(results.faults()));
+  return as_certified_values(*results);
+}
+
+std::vector<CertifiedValue> as_certified_values(const std::vector<reference::Result>& results) {
   std::vector<CertifiedValue> values;
-  for (const reference::Result& result : *results) {
+  for (const reference::Result& result : results) {
     const bool undefined = result.status == reference::Status::undefined;
     const fast::Status status = result.enclosure ? fast::Status::computed
                                 : undefined      ? fast::Status::undefined
@@ -33,7 +38,7 @@ std::vector<CertifiedValue> certified_values_of(const Case& point, const std::ve
 
 std::vector<Value> declined(const std::vector<Quantity>& quantities, const std::string& reason) {
   std::vector<Value> values;
-  for (const Quantity& quantity : quantities) values.push_back({quantity, fast::Status::declined, reason, {}});
+  for (const Quantity& quantity : quantities) values.push_back({quantity, fast::Status::declined, reason, {}, ""});
   return values;
 }
 

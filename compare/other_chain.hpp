@@ -14,6 +14,9 @@ std::vector<Value> values_of(const Case& point, const std::vector<model::Quantit
 std::vector<CertifiedValue> certified_values_of(const Case& point, const std::vector<model::Quantity>& quantities,
                                                 int digits);
 
+// Results of the reference as certified values.
+std::vector<CertifiedValue> as_certified_values(const std::vector<reference::Result>& results);
+
 // Every quantity declined for one reason.
 std::vector<Value> declined(const std::vector<model::Quantity>& quantities, const std::string& reason);
 std::vector<CertifiedValue> declined_certified(const std::vector<model::Quantity>& quantities,

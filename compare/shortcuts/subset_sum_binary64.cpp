@@ -5,7 +5,7 @@
 #include <string>
 #include <vector>
 
-#include "compare/shortcuts/silent_detectors_binary64.hpp"
+#include "compare/shortcuts/silent_detectors.hpp"
 #include "reference/model/pattern.hpp"
 
 namespace heraldgauge::compare {
@@ -54,11 +54,12 @@ std::vector<Outcome> accepted_strings(const model::Chain& chain) {
 }
 
 // sum over S in C of (-1)^|S| G(S u Z); s - C and C gives the subsets of C in rising order.
-double probability(const ChainBinary64& chain, const Clicks& clicks, bool odd) {
-  double sum = 0;
+template <class Number>
+Number probability(const SilentDetectors<Number>& chain, const Clicks& clicks, bool odd) {
+  Number sum = 0;
   DetectorSet subset = 0;
   do {
-    const double term = chain.no_click(subset | clicks.silent, odd);
+    const Number term = chain.no_click(subset | clicks.silent, odd);
     sum += std::popcount(subset) % 2 == 0 ? term : -term;
     subset = (subset - clicks.click) & clicks.click;
   } while (subset != 0);
@@ -102,11 +103,10 @@ std::optional<model::Fault> not_served(const model::Chain& chain) {
   return std::nullopt;
 }
 
-}  // namespace
-
-model::Expected<SubsetSum> subset_sum_binary64(const model::Chain& chain) {
+template <class Number>
+model::Expected<SubsetSum> subset_sum(const model::Chain& chain) {
   if (const auto fault = not_served(chain)) return *fault;
-  const ChainBinary64 numbers(chain);
+  const SilentDetectors<Number> numbers(chain);
   const std::size_t first_end_detector = 4 * chain.station_count();
   SubsetSum sum;
   for (const Outcome& outcome : accepted_strings(chain)) {
@@ -121,5 +121,10 @@ model::Expected<SubsetSum> subset_sum_binary64(const model::Chain& chain) {
   }
   return sum;
 }
+
+}  // namespace
+
+model::Expected<SubsetSum> subset_sum_binary64(const model::Chain& chain) { return subset_sum<double>(chain); }
+model::Expected<SubsetSum> subset_sum_binary32(const model::Chain& chain) { return subset_sum<float>(chain); }
 
 }  // namespace heraldgauge::compare

@@ -19,6 +19,8 @@ struct SubsetSum {
 // of 2x2 matrices round the chain). Faults where a detector counts photons, a source is not squeezed, or there are more
 // than `largest_subset_sum_stations` stations (the work grows as 8^N, 16^N for "either").
 model::Expected<SubsetSum> subset_sum_binary64(const model::Chain& chain);
+// The same with every operation in binary32.
+model::Expected<SubsetSum> subset_sum_binary32(const model::Chain& chain);
 
 inline constexpr std::size_t largest_subset_sum_stations = 5;
 

@@ -1,0 +1,216 @@
+// Every probability replaced by its lowest non-vanishing power of the pair parameters, all lam scaled together: the
+// terms of the smallest total number of pairs at which it does not vanish, without the factors (1-lam)^2.
+
+#include <algorithm>
+#include <map>
+
+#include "compare/fock/departure.hpp"
+#include "compare/fock/route.hpp"
+#include "compare/formula.hpp"
+#include "compare/key_formula.hpp"
+#include "compare/other_chain.hpp"
+#include "reference/determinant/exact_zero.hpp"
+#include "reference/extremes.hpp"
+#include "reference/quantities.hpp"
+
+namespace heraldgauge::compare {
+namespace {
+
+using fock::Arithmetic;
+using fock::Description;
+using model::Chain;
+using model::Quantity;
+using model::QuantityKind;
+using model::Rational;
+using model::Real;
+using reference::Basis;
+using reference::EndTable;
+using reference::Interval;
+
+constexpr long most_total = 12;
+
+// Weights lam^n (1, p/2 for an ideal pair, where p is the small parameter).
+Description expansion(const Chain& chain) {
+  Description description;
+  description.chain = chain;
+  description.by_total_pairs = true;
+  const auto enough = std::min<long>(most_total, 2 * static_cast<long>(chain.sources.size()) + 4);
+  for (const model::Source& source : chain.sources) {
+    const bool ideal = source.kind == model::SourceKind::ideal_pair;
+    std::vector<Real> weights{Real(1)};
+    for (long n = 1; n <= (ideal ? 1 : enough); ++n) weights.push_back(weights.back() * source.pair_parameter);
+    if (ideal) weights[1] = weights[1] / Real(2);
+    description.weights.push_back(std::move(weights));
+  }
+  return description;
+}
+
+bool is_multiple_of_45(const Rational& degrees) { return Rational(degrees / 45).get_den() == 1; }
+
+// The orders at which sums vanish are told in exact rationals: no parameter strictly inside its range matters for that.
+class LeadingOrders {
+ public:
+  explicit LeadingOrders(const Chain& chain)
+      : exact_(Arithmetic<Rational>{}, expansion(reference::zero_pattern_of(chain))), chain_(chain) {}
+
+  // The first total at which `part` of the exact tables is not zero; nothing where it is zero as far as was expanded.
+  template <class Part>
+  std::optional<std::size_t> first(Basis basis, Part&& part) {
+    auto found = tables_.find(basis);
+    if (found == tables_.end()) found = tables_.emplace(basis, exact_.ends(basis)).first;
+    for (std::size_t total = 0; total < found->second.size(); ++total) {
+      if (part(found->second[total]) != 0) return total;
+    }
+    return std::nullopt;
+  }
+  std::optional<std::size_t> first_herald() {
+    if (chain_.station_count() == 0) return 0;
+    const auto heralds = exact_.herald();
+    for (std::size_t total = 0; total < heralds.size(); ++total) {
+      if (heralds[total] != 0) return total;
+    }
+    return std::nullopt;
+  }
+
+ private:
+  fock::Chain<Rational> exact_;
+  const Chain& chain_;
+  std::map<Basis, std::vector<EndTable<Rational>>> tables_;
+};
+
+class LeadingOrder {
+ public:
+  LeadingOrder(const Chain& chain, reference::Precision bits)
+      : chain_(chain), bits_(bits), orders_(chain), values_(Arithmetic<Interval>{bits}, expansion(chain)) {}
+
+  Term value(const Quantity& quantity) {
+    switch (quantity.kind) {
+      case QuantityKind::herald_probability:
+        return herald();
+      case QuantityKind::trials_per_herald:
+        return quotient(computed(Interval(1L, bits_)), herald());
+      case QuantityKind::end_pattern:
+        return end_pattern(quantity.outcome);
+      case QuantityKind::gain:
+        return quotient(both(Basis::rectilinear), herald());
+      case QuantityKind::qber_rectilinear:
+        return quotient(error(Basis::rectilinear, reference::rectilinear_agreement_expected(chain_)),
+                        both(Basis::rectilinear));
+      case QuantityKind::qber_diagonal:
+        return quotient(error(Basis::diagonal, reference::diagonal_agreement_expected), both(Basis::diagonal));
+      case QuantityKind::key_fraction:
+      case QuantityKind::key_rate:
+        return key_from({value({QuantityKind::gain}), value({QuantityKind::qber_rectilinear}),
+                         value({QuantityKind::qber_diagonal}), herald()},
+                        chain_.protocol, quantity.kind, Interval(1L, bits_));
+      case QuantityKind::visibility:
+      case QuantityKind::visibility_deficit:
+        return visibility(quantity.kind == QuantityKind::visibility_deficit);
+      default:
+        return declined_term("a stated pattern is not expanded");
+    }
+  }
+
+ private:
+  static Term vanishes() {
+    return {fast::Status::undefined, "every term of the expansion that was made vanishes", std::nullopt};
+  }
+  static Term quotient(const Term& numerator, const Term& denominator) {
+    if (const auto missing = first_missing({&denominator})) return *missing;
+    if (numerator.status == fast::Status::undefined) return computed(Interval(denominator.value->precision()));
+    if (const auto missing = first_missing({&numerator})) return *missing;
+    return computed(*numerator.value / *denominator.value);
+  }
+
+  Term herald() {
+    if (chain_.station_count() == 0) return computed(Interval(1L, bits_));
+    const auto order = orders_.first_herald();
+    return order ? computed(values_.herald()[*order]) : vanishes();
+  }
+  const EndTable<Interval>& table(Basis basis, std::size_t order) {
+    auto found = tables_.find(basis);
+    if (found == tables_.end()) found = tables_.emplace(basis, values_.ends(basis)).first;
+    return found->second[order];
+  }
+  Term both(Basis basis) {
+    const auto order = orders_.first(basis, [](const auto& exact) { return reference::both_ends_click(exact); });
+    return order ? computed(reference::both_ends_click(table(basis, *order))) : vanishes();
+  }
+  Term error(Basis basis, bool agreement) {
+    const reference::Field<Rational> rationals;
+    const auto order =
+        orders_.first(basis, [&](const auto& exact) { return reference::erroneous(rationals, exact, agreement); });
+    if (!order) return vanishes();
+    return computed(reference::erroneous(reference::Field<Interval>{bits_}, table(basis, *order), agreement));
+  }
+  Term end_pattern(int outcome) {
+    if (!is_multiple_of_45(chain_.left_end.analyser_deg) || !is_multiple_of_45(chain_.right_end.analyser_deg)) {
+      return declined_term("which orders vanish is told at multiples of 45 degrees only");
+    }
+    const auto l = static_cast<std::size_t>(outcome >> 2), r = static_cast<std::size_t>(outcome & 3);
+    const auto order = orders_.first(Basis::analyser, [&](const auto& exact) { return exact.joint[l][r]; });
+    return quotient(order ? computed(table(Basis::analyser, *order).joint[l][r]) : vanishes(), herald());
+  }
+
+  // The coincidence as a function of the right angle, at the first order at which it does not vanish everywhere.
+  Term visibility(bool deficit) {
+    const long points = 2 * values_.cut(chain_.station_count()) + 1;
+    std::vector<Rational> angles;
+    for (long j = 0; j < points; ++j) angles.push_back(Rational(180 * j) / points);
+    const auto by_angle = values_.coincidences(angles);
+    for (std::size_t order = 0; order < by_angle.front().size(); ++order) {
+      std::vector<Interval> here;
+      for (const auto& at_angle : by_angle) here.push_back(at_angle[order]);
+      if (std::all_of(here.begin(), here.end(), [](const Interval& x) { return x.is_exactly_zero(); })) continue;
+      const auto extremes = reference::extremes_of(fock::profile_from(here));
+      const Interval smallest = extremes.mean + extremes.smallest;
+      const Interval sum = extremes.mean * 2L + extremes.largest + extremes.smallest;
+      return computed(deficit ? smallest * 2L / sum : Interval(extremes.largest - extremes.smallest) / sum);
+    }
+    return vanishes();
+  }
+
+  const Chain& chain_;
+  reference::Precision bits_;
+  LeadingOrders orders_;
+  fock::Chain<Interval> values_;
+  std::map<Basis, std::vector<EndTable<Interval>>> tables_;
+};
+
+std::optional<std::string> not_served(const Chain& chain) {
+  if (chain.station_count() > 3) return "more than three stations";
+  const auto has_background = [](const auto& place) { return !place.background.photons.is_zero(); };
+  const bool background = has_background(chain.left_end) || has_background(chain.right_end) ||
+                          std::any_of(chain.stations.begin(), chain.stations.end(), has_background);
+  return background ? std::optional<std::string>("a shared background is not served") : std::nullopt;
+}
+
+CertifiedValue as_certified(const Quantity& quantity, const Term& term) {
+  if (!term.value) return {quantity, term.status, term.reason, std::nullopt};
+  if (!term.value->is_bounded())
+    return {quantity, fast::Status::declined, "no bounded value was reached", std::nullopt};
+  return {quantity, fast::Status::computed, "", reference::Enclosure{term.value->lower(), term.value->upper()}};
+}
+
+}  // namespace
+
+Departure leading_order() {
+  Departure departure;
+  departure.id = "leading-order";
+  departure.sentence =
+      "Each probability is its lowest non-vanishing power of the pair parameters, dark counts as they are.";
+  departure.replaces = "P by the first non-zero term of its series in a common scale of all lam";
+  departure.claimed = "lam far below 1 and above all dark counts";
+  departure.source = "common practice";
+  departure.touches = touches_probabilities;
+  departure.enclose = [](const Case& point, const std::vector<Quantity>& quantities, const Setting&, int digits) {
+    if (const auto reason = not_served(point.chain)) return declined_certified(quantities, *reason);
+    LeadingOrder leading(point.chain, static_cast<reference::Precision>(4 * digits + 128));
+    std::vector<CertifiedValue> values;
+    for (const Quantity& quantity : quantities) values.push_back(as_certified(quantity, leading.value(quantity)));
+    return values;
+  };
+  return rounding_its_enclosures(std::move(departure));
+}
+
+}  // namespace heraldgauge::compare
