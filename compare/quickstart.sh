@@ -15,6 +15,12 @@ report="$folder/fibre_line.json"
 "$folder/heraldgauge_demo" "$demo/fibre_line.toml" "$demo/direct_link.toml"
 "$folder/heraldgauge" enclose "$demo/fibre_line.toml" --format json --output "$report" \
   --certificate "$folder/fibre_line.certificate.json"
+echo
+echo "What shortcuts would have cost on this line (relative errors of the herald probability, certified):"
+"$folder/heraldgauge" ledger "$demo/fibre_line.toml" --quantity herald_probability --shortcut pair-cutoff=2 \
+  --shortcut single-pair --shortcut linear-loss --shortcut herald-product --shortcut linear-dark \
+  --shortcut subset-sum-binary64
+echo
 echo "Report:      $report"
 echo "Certificate: $folder/fibre_line.certificate.json"
 echo "Try:         $folder/heraldgauge enclose $demo/fibre_line.toml --digits 50"

@@ -17,9 +17,12 @@ constexpr const char* examples =
     "  heraldgauge enclose link.toml --set chain.stations=3 --set station.detector.efficiency=0.2\n"
     "  heraldgauge quick link.toml --format csv --output table.csv\n"
     "  heraldgauge audit table.csv link.toml               judge the numbers of a table\n"
+    "  heraldgauge ledger link.toml --shortcut pair-cutoff=4 --budget allowed.toml\n"
+    "  heraldgauge frontier link.toml --shortcut linear-loss --quantity key_rate --error 0.01 \\\n"
+    "    --over source.pair_parameter --from 0.001 --to 0.2\n"
     "  heraldgauge list keys                               what a scenario may say\n"
-    "Exit status: 0 done, 1 a number differs or is impossible, 2 input or usage at fault, 3 a value could not be "
-    "certified, "
+    "Exit status: 0 done, 1 a number differs, is impossible or outside its budget, 2 input or usage at fault, "
+    "3 a value could not be certified, "
     "4 the machine failed.\n";
 
 void add_output_options(CLI::App& command, Arguments& into) {
@@ -72,6 +75,33 @@ void add_audit(CLI::App& app, Arguments& into) {
       ->type_name("FILE");
 }
 
+void add_ledger(CLI::App& app, Arguments& into) {
+  CLI::App& command = *app.add_subcommand("ledger", "What each shortcut costs against the certified values.");
+  add_scenario_options(command, into);
+  command.add_option("--shortcut", into.shortcuts, "a shortcut, or ID=SETTING; may be repeated; all where left out")
+      ->type_name("ID")
+      ->allow_extra_args(false);
+  command.add_option("--budget", into.budget, "allowed errors (TOML); what exceeds them ends with status 1")
+      ->type_name("FILE");
+}
+
+void add_frontier(CLI::App& app, Arguments& into) {
+  CLI::App& command = *app.add_subcommand("frontier", "How far a key can go before a shortcut leaves an error.");
+  add_scenario_options(command, into);
+  command.add_option("--shortcut", into.shortcuts, "the shortcut, or ID=SETTING")
+      ->type_name("ID")
+      ->required()
+      ->allow_extra_args(false);
+  command.add_option("--error", into.error, "the relative error to stay within")->type_name("E")->required();
+  const auto add_range = [&](const char* name, std::vector<std::string>& values, const char* what, const char* type) {
+    command.add_option(name, values, what)->type_name(type)->required()->allow_extra_args(false);
+  };
+  add_range("--over", into.over, "the key that is moved; twice for a map", "KEY");
+  add_range("--from", into.from, "where its range begins, one for each key", "X");
+  add_range("--to", into.to, "where it ends, one for each key", "X");
+  command.add_option("--points", into.points, "points of a map along each key")->type_name("N")->capture_default_str();
+}
+
 void add_list(CLI::App& app, Arguments& into) {
   CLI::App& command = *app.add_subcommand("list", "What there is, with a sentence each.");
   command.add_option("SUBJECT", into.list_subject, "quantities, shortcuts, conventions or keys")->required();
@@ -102,6 +132,8 @@ std::variant<Arguments, Stop> parse_arguments(int count, const char* const* valu
   app.require_subcommand(1);
   add_enclose(app, arguments);
   add_quick(app, arguments);
+  add_ledger(app, arguments);
+  add_frontier(app, arguments);
   add_list(app, arguments);
   add_audit(app, arguments);
   try {

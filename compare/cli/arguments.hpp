@@ -22,7 +22,7 @@ struct AuditArguments {
 };
 
 struct Arguments {
-  std::string command;  // enclose | quick | list | audit
+  std::string command;  // enclose | quick | audit | ledger | frontier | list
   std::string scenario;
   std::vector<std::string> quantities;
   std::vector<std::string> assignments;  // KEY=VALUE
@@ -35,6 +35,13 @@ struct Arguments {
   std::optional<std::string> certificate;
   std::string list_subject;
   AuditArguments audit;
+  std::vector<std::string> shortcuts;  // ID or ID=SETTING
+  std::optional<std::string> budget;   // a file
+  std::vector<std::string> over;       // keys of a frontier, and the ends of their ranges
+  std::vector<std::string> from;
+  std::vector<std::string> to;
+  std::string error;
+  std::string points = "100";
 };
 
 // What to print instead of running a command: help or version for standard output, a usage fault for standard error.

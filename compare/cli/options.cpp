@@ -1,6 +1,9 @@
 #include "compare/cli/options.hpp"
 
+#include <algorithm>
+
 #include "compare/cli/audit.hpp"
+#include "compare/cli/input.hpp"
 #include "reference/model/exact_number.hpp"
 #include "reference/model/reading/keys.hpp"
 
@@ -77,6 +80,52 @@ compare::ListSubject subject_named(const std::string& name, Faults& faults) {
   return compare::ListSubject::quantities;
 }
 
+model::Rational exact_number(const std::string& option, const std::string& text, Faults& faults) {
+  const auto number = model::parse_exact(text);
+  if (number) return *number;
+  faults.push_back(fault_of(option, "'" + text + "'", "a decimal or a fraction"));
+  return 0;
+}
+
+void read_budget_file(const Arguments& arguments, compare::LedgerOptions& ledger, Faults& faults) {
+  if (!arguments.budget) return;
+  const auto text = read_input(*arguments.budget);
+  if (!text) {
+    faults.insert(faults.end(), text.faults().begin(), text.faults().end());
+    return;
+  }
+  const auto budget = compare::read_budget(*text, *arguments.budget);
+  if (budget) {
+    ledger.budget = *budget;
+  } else {
+    faults.insert(faults.end(), budget.faults().begin(), budget.faults().end());
+  }
+}
+
+compare::FrontierOptions frontier_of(const Arguments& arguments, const std::vector<model::Quantity>& quantities,
+                                     Faults& faults) {
+  compare::FrontierOptions frontier;
+  if (arguments.shortcuts.size() != 1) faults.push_back(fault_of("--shortcut", "more than one", "one shortcut"));
+  if (quantities.size() != 1) {
+    faults.push_back(fault_of("--quantity", std::to_string(quantities.size()) + " quantities", "one quantity"));
+  } else {
+    frontier.quantity = quantities.front();
+  }
+  frontier.shortcut = arguments.shortcuts.front();
+  frontier.error = exact_number("--error", arguments.error, faults);
+  frontier.points = whole_number("--points", arguments.points, 1000, 2, faults);
+  if (frontier.points < 2) faults.push_back(fault_of("--points", "'" + arguments.points + "'", "2 or more"));
+  if (arguments.from.size() != arguments.over.size() || arguments.to.size() != arguments.over.size()) {
+    faults.push_back(fault_of("--over", "not as many ranges as keys", "one --from and one --to for each --over"));
+  }
+  const std::size_t ranges = std::min({arguments.over.size(), arguments.from.size(), arguments.to.size()});
+  for (std::size_t i = 0; i < ranges; ++i) {
+    frontier.axes.push_back({arguments.over[i], exact_number("--from", arguments.from[i], faults),
+                             exact_number("--to", arguments.to[i], faults)});
+  }
+  return frontier;
+}
+
 void refuse_two_documents_in_one_place(const Arguments& arguments, Faults& faults) {
   if (arguments.certificate == arguments.output) {
     faults.push_back(fault_of("--certificate", "it would go to the same place as the answer", "another FILE"));
@@ -103,10 +152,10 @@ model::Expected<Options> resolve_options(const Arguments& arguments) {
   Faults faults;
   options.format = format_named(arguments.format, faults);
   options.assignments = assignments_of(arguments.assignments, faults);
-  options.enclose.quantities = options.quick.quantities = options.audit.quantities =
+  options.enclose.quantities = options.quick.quantities = options.audit.quantities = options.ledger.quantities =
       quantities_named(arguments.quantities, faults);
   if (arguments.threads) {
-    options.enclose.threads = options.quick.threads = options.audit.threads =
+    options.enclose.threads = options.quick.threads = options.audit.threads = options.ledger.threads =
         static_cast<unsigned>(whole_number("--threads", *arguments.threads, largest_thread_count, 1, faults));
   }
   options.enclose.digits =
@@ -115,6 +164,12 @@ model::Expected<Options> resolve_options(const Arguments& arguments) {
   options.enclose.exact = arguments.exact;
   options.enclose.with_certificate = arguments.certificate.has_value();
   if (arguments.command == "audit") options.audit.rule = rule_given(arguments, faults);
+  options.ledger.shortcuts = arguments.shortcuts;
+  if (arguments.command == "ledger") read_budget_file(arguments, options.ledger, faults);
+  if (arguments.command == "frontier") {
+    options.frontier = frontier_of(arguments, options.enclose.quantities, faults);
+    options.frontier.threads = options.ledger.threads;
+  }
   if (arguments.command == "list") options.list_subject = subject_named(arguments.list_subject, faults);
   refuse_two_documents_in_one_place(arguments, faults);
   if (!faults.empty()) return faults;

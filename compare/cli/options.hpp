@@ -6,6 +6,8 @@
 #include "compare/audit_command.hpp"
 #include "compare/cli/arguments.hpp"
 #include "compare/enclose_command.hpp"
+#include "compare/frontier_command.hpp"
+#include "compare/ledger_command.hpp"
 #include "compare/list_command.hpp"
 #include "compare/quick_command.hpp"
 #include "reference/model/scenario.hpp"
@@ -20,6 +22,8 @@ struct Options {
   compare::EncloseOptions enclose;
   compare::QuickOptions quick;
   compare::AuditOptions audit;
+  compare::LedgerOptions ledger;
+  compare::FrontierOptions frontier;
   compare::ListSubject list_subject = compare::ListSubject::quantities;
 };
 

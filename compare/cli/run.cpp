@@ -4,6 +4,7 @@
 #include "compare/cli/input.hpp"
 #include "compare/cli/options.hpp"
 #include "compare/cli/output.hpp"
+#include "reports/ledger.hpp"
 
 namespace heraldgauge::cli {
 namespace {
@@ -46,6 +47,20 @@ ExitStatus run_quick(const Arguments& arguments, const Options& options, const m
   return graver(status, deliver(arguments, options, answer->report));
 }
 
+ExitStatus run_ledger(const Arguments& arguments, const Options& options, const model::Scenario& scenario) {
+  const auto report = compare::ledger_command(scenario, options.ledger);
+  if (!report) return refuse(report.faults());
+  const ExitStatus status = report->breaches.empty() ? ExitStatus::done : ExitStatus::found;
+  return graver(status, deliver(arguments, options, *report));
+}
+
+ExitStatus run_frontier(const Arguments& arguments, const Options& options, const model::Scenario& scenario) {
+  const auto answer = compare::frontier_command(scenario, options.frontier);
+  if (!answer) return refuse(answer.faults());
+  const ExitStatus status = answer->decided ? ExitStatus::done : ExitStatus::undecided;
+  return graver(status, deliver(arguments, options, answer->report));
+}
+
 model::Expected<model::Scenario> scenario_of(const Arguments& arguments, const Options& options) {
   const auto text = read_input(arguments.scenario);
   if (!text) return text.faults();
@@ -83,6 +98,8 @@ ExitStatus run(const Arguments& arguments) {
   const auto scenario = scenario_of(arguments, *options);
   if (!scenario) return refuse(scenario.faults());
   if (arguments.command == "audit") return run_audit(audit_run_of(arguments, *options), *scenario);
+  if (arguments.command == "ledger") return run_ledger(arguments, *options, *scenario);
+  if (arguments.command == "frontier") return run_frontier(arguments, *options, *scenario);
   return arguments.command == "enclose" ? run_enclose(arguments, *options, *scenario)
                                         : run_quick(arguments, *options, *scenario);
 }
