@@ -15,7 +15,8 @@ TEST(FockChain, ReproducesTheBruteForceRows) {
   for (const test::OracleRow& row : test::oracle_rows()) {
     if (row.kind == test::OracleRow::Kind::visibility) continue;
     SCOPED_TRACE(row.id);
-    Description description{row.chain, {}, {}, ClickRule::threshold, true, false};
+    Description description;
+    description.chain = row.chain;
     for (const model::Source& source : row.chain.sources)
       description.weights.push_back(model_weights(source, row.chain.station_count() == 0 ? 48 : 16));
     const Chain<double> chain(Arithmetic<double>{}, description);
