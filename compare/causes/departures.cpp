@@ -93,13 +93,18 @@ Evaluate evaluator_of(const Used& used) {
   };
 }
 
-// `outer` changes the inputs that `inner` works on; nothing where it cannot.
+// `outer` changes the inputs that `inner` works on, or works on its outputs; nothing where it does neither.
 std::optional<Evaluate> composed(const Used& outer, const Used& inner) {
-  if (!outer.departure->transform) return std::nullopt;
-  return [outer, inner](const Case& point, const std::vector<Quantity>& quantities) {
-    const auto changed = outer.departure->transform(point);
-    if (!changed) return std::vector<Value>(quantities.size(), Value{});
-    return values_of_departure(*inner.departure, inner.setting, *changed, quantities);
+  const Evaluate evaluate = evaluator_of(inner);
+  if (outer.departure->transform) {
+    return [outer, evaluate](const Case& point, const std::vector<Quantity>& quantities) {
+      const auto changed = outer.departure->transform(point);
+      return changed ? evaluate(*changed, quantities) : std::vector<Value>(quantities.size(), Value{});
+    };
+  }
+  if (!outer.departure->rework) return std::nullopt;
+  return [outer, evaluate](const Case& point, const std::vector<Quantity>& quantities) {
+    return outer.departure->rework(point, quantities, evaluate);
   };
 }
 

@@ -29,5 +29,14 @@ TEST(AuditDemo, LeavesARightCodeAlone) {
   EXPECT_TRUE(result.answer.conclusion.causes.empty());
 }
 
+TEST(AuditDemo, NamesTheCutOffOfACode) {
+  const Audited result = audited(demo_file("code.toml"), demo_file("two_pairs.csv"));
+  EXPECT_EQ(result.answer.conclusion.summary.counts.differs, 12u);
+  ASSERT_FALSE(result.answer.conclusion.causes.empty());
+  EXPECT_EQ(result.answer.conclusion.causes[0].cause, "pair-cutoff");
+  ASSERT_TRUE(result.answer.conclusion.causes[0].setting);
+  EXPECT_NE(result.answer.conclusion.causes[0].setting->find("= 2"), std::string::npos);
+}
+
 }  // namespace
 }  // namespace heraldgauge::test
