@@ -125,10 +125,7 @@ class Certifier {
         return result_of(quantity, computed, certificate());
       }
       const Accuracy next = improved(missing_bits(*computed.value, computed.scale, request_.digits));
-      if (attempt == most_attempts || next.bits > request_.largest_precision_bits ||
-          next.log2_tail < -static_cast<double>(request_.largest_precision_bits)) {
-        return result_of(quantity, computed, certificate());
-      }
+      if (attempt == most_attempts || !is_within_limits(next)) return result_of(quantity, computed, certificate());
       tables_->improve(next);
     }
   }
@@ -139,7 +136,12 @@ class Certifier {
     if (chain_.station_count() == 0 || route_ != RouteName::determinant) return;
     tables_->begin_value();
     const auto missing = missing_bits(tables_->herald(), std::nullopt, request_.digits);
-    if (missing && *missing > 0) tables_->improve(improved(missing));
+    if (missing && *missing > 0 && is_within_limits(improved(missing))) tables_->improve(improved(missing));
+  }
+
+  bool is_within_limits(const Accuracy& accuracy) const {
+    return accuracy.bits <= request_.largest_precision_bits &&
+           accuracy.log2_tail >= -static_cast<double>(request_.largest_precision_bits);
   }
 
   Accuracy improved(const std::optional<double>& missing) const {

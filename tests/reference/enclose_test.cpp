@@ -212,7 +212,7 @@ TEST(Enclose, RefusesWhatItCannotServeByName) {
 }
 
 TEST(Enclose, SaysUndecidedWhereThePrecisionIsNotEnough) {
-  Chain chain = test::alike_chain(3, "1/100", "1/10", "1/2", "1/1000000");
+  Chain chain = test::alike_chain(3, "1/10000", "1/100", "1/10", "0");
   Request request;
   request.quantities = {{QuantityKind::gain, 0}};
   request.largest_precision_bits = 170;
