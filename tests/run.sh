@@ -4,9 +4,9 @@
 set -euo pipefail
 source "$(dirname "${BASH_SOURCE[0]}")/../compare/setup.sh"
 
-require_packages "${program_packages[@]}" "${test_packages[@]}"
+require_packages "${program_packages[@]}" "${test_packages[@]}" "${bench_packages[@]}"
 folder="$top/build-tests"
-build "$folder" -DHERALDGAUGE_TESTS=ON
+build "$folder" -DHERALDGAUGE_TESTS=ON -DHERALDGAUGE_BENCH=ON
 
 log="$folder/tests.log"
 status=0

@@ -1,67 +1,11 @@
-#include "bench/baselines.hpp"
+#include "bench/subset_sum.hpp"
 
 #include <Eigen/Dense>
-
+#include <bit>
 #include <cmath>
-#include <cstddef>
-#include <vector>
 
 namespace heraldgauge::bench {
 namespace {
-
-double binomial(int n, int k) {
-  if (k < 0 || k > n) return 0;
-  double product = 1;
-  for (int i = 1; i <= k; ++i) product = product * (n - k + i) / i;
-  return product;
-}
-
-// <ij| Gamma([[a,x],[x,b]]) |ij>.
-double diagonal_element(int i, int j, double a, double b, double x) {
-  double sum = 0;
-  for (int p = 0; p <= i; ++p) {
-    if (j - i + p < 0) continue;
-    sum += binomial(i, p) * binomial(j, i - p) * std::pow(a, p) * std::pow(x, 2 * (i - p)) * std::pow(b, j - i + p);
-  }
-  return sum;
-}
-
-// One detector of a polarisation clicks, the other is silent.
-std::vector<double> click_table(const AlikeChain& chain, int pairs) {
-  const double k = chain.efficiency * chain.transmittance / 2;
-  const double live = 1 - chain.dark;
-  std::vector<double> table;
-  for (int i = 0; i <= pairs; ++i) {
-    for (int j = 0; j <= pairs; ++j) {
-      table.push_back(live * diagonal_element(i, j, 1 - k, 1 - k, k) -
-                      live * live * diagonal_element(i, j, 1 - 2 * k, 1 - 2 * k, 0));
-    }
-  }
-  return table;
-}
-
-class NestedSum {
- public:
-  NestedSum(const AlikeChain& chain, int pairs) : chain_(chain), pairs_(pairs), click_(click_table(chain, pairs)) {}
-
-  double from(int source, int left_h, int left_v) const {
-    double sum = 0;
-    for (int h = 0; h <= pairs_; ++h) {
-      for (int v = 0; h + v <= pairs_; ++v) {
-        const double weight = std::pow(1 - chain_.lam, 2) * std::pow(chain_.lam, h + v);
-        const double station = source == 0 ? 1 : 2 * element(left_h, h) * element(left_v, v);
-        sum += weight * station * (source == chain_.stations ? 1 : from(source + 1, h, v));
-      }
-    }
-    return sum;
-  }
-
- private:
-  double element(int i, int j) const { return click_[static_cast<std::size_t>(i * (pairs_ + 1) + j)]; }
-  AlikeChain chain_;
-  int pairs_;
-  std::vector<double> click_;
-};
 
 // What each subset of silent detectors does to the modes of one polarisation: 1 - K on the arms, in source order L_0
 // R_0 L_1 ...
@@ -95,15 +39,13 @@ double no_click(const AlikeChain& chain, unsigned silent_c, unsigned silent_d) {
 
 }  // namespace
 
-double number_conserving_sum(const AlikeChain& chain, int pairs) { return NestedSum(chain, pairs).from(0, 0, 0); }
-
 double determinant_subset_sum(const AlikeChain& chain) {
   const unsigned all = (1U << chain.stations) - 1;
   const double live = 1 - chain.dark;
   // Detectors c click everywhere, d stay silent; 2^N equal strings. H and V are independent without an analyser.
   double sum = 0;
   for (unsigned also_silent = 0; also_silent <= all; ++also_silent) {
-    const int extra = __builtin_popcount(also_silent);
+    const int extra = std::popcount(also_silent);
     const double sign = extra % 2 == 0 ? 1 : -1;
     sum += sign * std::pow(live, chain.stations + extra) * no_click(chain, also_silent, all);
   }

@@ -1,0 +1,21 @@
+#pragma once
+// How many operations the fast evaluator needs for one point, and how many the machine can do.
+
+#include <vector>
+
+#include "reference/model/chain.hpp"
+#include "reference/model/quantity.hpp"
+
+namespace heraldgauge::bench {
+
+// Multiply-adds of the transfer from source to source and of the contractions at the right end, counted from the plan
+// of a chain's first attempt; tables of station and end elements, weights and tail bounds are left out. Throws where
+// the fast evaluator does not serve the chain.
+double multiply_adds(const model::Chain& chain, const std::vector<model::Quantity>& quantities);
+
+// Does `steps` rounds of multiply-adds that do not wait for each other, in the widest registers that the fast
+// evaluator uses on this machine, multiplication and addition each rounded as there. Returns their number; `sink`
+// receives the results.
+double multiply_adds_at_peak(long steps, double& sink);
+
+}  // namespace heraldgauge::bench
