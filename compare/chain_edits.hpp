@@ -1,5 +1,5 @@
 #pragma once
-// Visits every number of one kind in a chain, for departures that change them all alike.
+// Visits every number of one kind in a chain, for departures that change them all alike, and a question that many ask.
 
 #include "reference/model/chain.hpp"
 
@@ -19,6 +19,15 @@ template <class Edit>
 void for_each_arm(model::Chain& chain, Edit&& edit) {
   for (model::Arm& arm : chain.left_arms) edit(arm);
   for (model::Arm& arm : chain.right_arms) edit(arm);
+}
+
+// Whether any place has a shared background.
+inline bool has_background(const model::Chain& chain) {
+  const auto has = [](const auto& place) { return !place.background.photons.is_zero(); };
+  for (const model::Station& station : chain.stations) {
+    if (has(station)) return true;
+  }
+  return has(chain.left_end) || has(chain.right_end);
 }
 
 // Squeezed sources only: an ideal pair source has a probability, which these conventions leave alone.

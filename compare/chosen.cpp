@@ -1,7 +1,6 @@
 #include "compare/chosen.hpp"
 
-#include "compare/conventions/registry.hpp"
-#include "compare/shortcuts/registry.hpp"
+#include "compare/registry.hpp"
 #include "reference/model/exact_number.hpp"
 #include "reference/model/reading/keys.hpp"
 
@@ -25,8 +24,7 @@ Fault unknown(const std::string& id) {
 Expected<Chosen> chosen(const std::string& text) {
   const std::size_t equals = text.find('=');
   const std::string id = text.substr(0, equals);
-  const Departure* departure = find_shortcut(id);
-  if (departure == nullptr) departure = find_convention(id);
+  const Departure* departure = find_departure(id);
   if (departure == nullptr) return unknown(id);
   Setting given;
   if (equals != std::string::npos) {

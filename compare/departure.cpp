@@ -19,6 +19,24 @@ Expected<Case> case_at(const model::Scenario& scenario, std::uint64_t index) {
   return case_with(scenario, scenario.parameters_at(index));
 }
 
+std::optional<model::Rational> number_in_force(const Case& point, const std::string& key) {
+  if (point.scenario == nullptr) return std::nullopt;
+  for (const auto& [changed, value] : point.changes) {
+    if (changed == key && std::holds_alternative<model::Rational>(value)) return std::get<model::Rational>(value);
+  }
+  const auto found = point.scenario->settings.find(key);
+  const bool is_number =
+      found != point.scenario->settings.end() && std::holds_alternative<model::Rational>(found->second.value);
+  return is_number ? std::optional(std::get<model::Rational>(found->second.value)) : std::nullopt;
+}
+
+Expected<Case> case_with(const Case& point, const std::string& key, const model::Rational& number) {
+  auto changes = point.changes;
+  std::erase_if(changes, [&](const auto& change) { return change.first == key; });
+  changes.emplace_back(key, number);
+  return case_with(*point.scenario, changes);
+}
+
 Expected<Setting> checked_setting(const Departure& departure, const Setting& given) {
   const auto fault = [&](const std::string& wrong, const std::string& allowed) {
     return model::Fault{{"--shortcut", 0, 0, departure.id}, wrong, allowed};
@@ -41,6 +59,17 @@ bool touches_capacities(const Quantity& quantity) { return !touches_probabilitie
 bool touches_everything(const Quantity&) { return true; }
 bool touches_key(const Quantity& quantity) {
   return quantity.kind == QuantityKind::key_fraction || quantity.kind == QuantityKind::key_rate;
+}
+bool touches_errors(const Quantity& quantity) {
+  return quantity.kind == QuantityKind::qber_rectilinear || quantity.kind == QuantityKind::qber_diagonal ||
+         touches_key(quantity);
+}
+bool touches_analyser(const Quantity& quantity) {
+  return quantity.kind == QuantityKind::end_pattern || quantity.kind == QuantityKind::pattern_probability ||
+         touches_visibility(quantity);
+}
+bool touches_visibility(const Quantity& quantity) {
+  return quantity.kind == QuantityKind::visibility || quantity.kind == QuantityKind::visibility_deficit;
 }
 
 }  // namespace heraldgauge::compare

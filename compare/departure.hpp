@@ -32,6 +32,10 @@ struct Case {
 model::Expected<Case> case_at(const model::Scenario& scenario, std::uint64_t index);
 model::Expected<Case> case_with(const model::Scenario& scenario,
                                 const std::vector<std::pair<std::string, model::Value>>& changes);
+// The number in force for a key at a case, a changed one before the scenario's own; nothing where the key is not set to
+// a number or the case has no scenario. The same case with that number changed; requires a scenario.
+std::optional<model::Rational> number_in_force(const Case& point, const std::string& key);
+model::Expected<Case> case_with(const Case& point, const std::string& key, const model::Rational& number);
 
 // A number that a departure is used with, such as the pairs kept.
 using Setting = std::optional<model::Rational>;
@@ -108,6 +112,9 @@ model::Expected<Setting> checked_setting(const Departure& departure, const Setti
 bool touches_probabilities(const model::Quantity& quantity);  // all but the capacities
 bool touches_capacities(const model::Quantity& quantity);
 bool touches_everything(const model::Quantity& quantity);
-bool touches_key(const model::Quantity& quantity);  // key_fraction and key_rate
+bool touches_key(const model::Quantity& quantity);         // key_fraction and key_rate
+bool touches_errors(const model::Quantity& quantity);      // the error rates, and with them the key
+bool touches_analyser(const model::Quantity& quantity);    // what depends on the chain's own analyser angles
+bool touches_visibility(const model::Quantity& quantity);  // visibility and visibility_deficit
 
 }  // namespace heraldgauge::compare

@@ -36,4 +36,13 @@ KeyInputs key_inputs(const Case& point, Terms& terms) {
           terms.at(point, needed[3])};
 }
 
+Term with_error_rates(const Case& point, const Quantity& quantity, Terms& terms, const ErrorRate& rate) {
+  if (!touches_errors(quantity)) return terms.at(point, quantity);
+  if (!touches_key(quantity)) return rate(point, quantity.kind, terms);
+  KeyInputs inputs = key_inputs(point, terms);
+  inputs.rectilinear = rate(point, QuantityKind::qber_rectilinear, terms);
+  inputs.diagonal = rate(point, QuantityKind::qber_diagonal, terms);
+  return key_from(inputs, point.chain.protocol, quantity.kind, Interval(1L, terms.bits()));
+}
+
 }  // namespace heraldgauge::compare

@@ -16,4 +16,9 @@ Term key_from(const KeyInputs& inputs, const model::Protocol& protocol, model::Q
 // Those of the case itself.
 KeyInputs key_inputs(const Case& point, Terms& terms);
 
+// A quantity where both error rates are replaced by those of a formula (given qber_rectilinear or qber_diagonal), and
+// everything else is as the terms have it.
+using ErrorRate = std::function<Term(const Case&, model::QuantityKind, Terms&)>;
+Term with_error_rates(const Case& point, const model::Quantity& quantity, Terms& terms, const ErrorRate& rate);
+
 }  // namespace heraldgauge::compare

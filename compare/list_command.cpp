@@ -1,7 +1,6 @@
 #include "compare/list_command.hpp"
 
-#include "compare/conventions/registry.hpp"
-#include "compare/shortcuts/registry.hpp"
+#include "compare/registry.hpp"
 #include "reference/model/quantity.hpp"
 #include "reference/model/scenario.hpp"
 

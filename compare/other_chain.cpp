@@ -70,4 +70,13 @@ Departure by_other_chain(Departure departure) {
   return departure;
 }
 
+Departure by_edited_chain(Departure departure, const std::function<void(model::Chain&)>& edit) {
+  departure.transform = [edit](const Case& point) -> model::Expected<Case> {
+    Case other = point;
+    edit(other.chain);
+    return other;
+  };
+  return by_other_chain(std::move(departure));
+}
+
 }  // namespace heraldgauge::compare

@@ -9,6 +9,9 @@ namespace heraldgauge::compare {
 // the transformed case.
 Departure by_other_chain(Departure departure);
 
+// The same for a departure that edits the chain, whatever the scenario.
+Departure by_edited_chain(Departure departure, const std::function<void(model::Chain&)>& edit);
+
 // Values of a chain by the binary64 evaluator, and by the reference.
 std::vector<Value> values_of(const Case& point, const std::vector<model::Quantity>& quantities);
 std::vector<CertifiedValue> certified_values_of(const Case& point, const std::vector<model::Quantity>& quantities,

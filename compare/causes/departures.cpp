@@ -6,9 +6,8 @@
 #include <span>
 
 #include "compare/causes/evaluate.hpp"
-#include "compare/conventions/registry.hpp"
 #include "compare/parallel.hpp"
-#include "compare/shortcuts/registry.hpp"
+#include "compare/registry.hpp"
 
 namespace heraldgauge::compare {
 namespace {

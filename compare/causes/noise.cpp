@@ -6,7 +6,6 @@
 #include <cmath>
 
 #include "compare/causes/evaluate.hpp"
-#include "compare/shortcuts/registry.hpp"
 
 namespace heraldgauge::compare {
 namespace {

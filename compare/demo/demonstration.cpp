@@ -4,7 +4,7 @@
 
 #include "compare/digits.hpp"
 #include "compare/points.hpp"
-#include "compare/shortcuts/subset_sum_binary64.hpp"
+#include "compare/subset_sum/subset_sum.hpp"
 #include "reference/arithmetic/decimal.hpp"
 #include "reference/closed_form/direct_pair_link.hpp"
 #include "reference/enclose.hpp"
@@ -48,7 +48,7 @@ Expected<std::vector<reports::ComparisonRow>> rows_at(const model::Chain& chain,
                                                       const std::vector<Quantity>& quantities) {
   const auto exact = certified(chain, quantities);
   if (!exact) return exact.faults();
-  const auto sum = subset_sum_binary64(chain);
+  const auto sum = subset_sum<double>(chain);
   if (!sum) return sum.faults();
   std::vector<reports::ComparisonRow> rows;
   for (const reference::Result& result : *exact) {

@@ -4,6 +4,7 @@
 #include <cmath>
 #include <numbers>
 
+#include "compare/chain_edits.hpp"
 #include "compare/fock/extremes.hpp"
 #include "compare/fock/route.hpp"
 #include "compare/other_chain.hpp"
@@ -64,11 +65,7 @@ class FockProbabilities : public Probabilities64 {
 };
 
 std::optional<std::string> not_served(const model::Chain& chain, const std::vector<long>& cuts) {
-  const auto has_background = [](const auto& place) { return !place.background.photons.is_zero(); };
-  if (has_background(chain.left_end) || has_background(chain.right_end) ||
-      std::any_of(chain.stations.begin(), chain.stations.end(), has_background)) {
-    return "a shared background is not served";
-  }
+  if (has_background(chain)) return "a shared background is not served";
   if (*std::max_element(cuts.begin(), cuts.end()) > most_pairs) return "too many pairs would have to be kept";
   return std::nullopt;
 }
@@ -132,6 +129,14 @@ Departure by_fock(Departure departure, const Recipe& recipe) {
     return certified_by(make, point, quantities, digits);
   };
   return departure;
+}
+
+Departure by_changed_response(Departure departure, const std::function<void(Description&)>& change, Tail tail) {
+  const auto cuts = [](const model::Chain& chain, const Setting&, double log2_tail) {
+    return cuts_for_model(chain, log2_tail);
+  };
+  const auto changed = [change](Description& description, const Setting&) { change(description); };
+  return by_fock(std::move(departure), {cuts, changed, tail});
 }
 
 }  // namespace heraldgauge::compare::fock

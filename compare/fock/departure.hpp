@@ -20,6 +20,11 @@ struct Recipe {
 // Completes a departure with evaluate and enclose. Declined: shared background, too many pairs to keep.
 Departure by_fock(Departure departure, const Recipe& recipe);
 
+// The same for a departure with all pair numbers of the model, which changes what happens to them. `tail` bounds what
+// is left out where a response may exceed 1.
+using Tail = Interval (*)(const model::Chain&, const std::vector<long>& cuts, reference::Precision bits);
+Departure by_changed_response(Departure departure, const std::function<void(Description&)>& change, Tail tail);
+
 // Both changes at once: the cut-offs are those of the one that cuts off. Nothing where both do.
 std::optional<Recipe> both(const Recipe& first, const Setting& first_setting, const Recipe& second,
                            const Setting& second_setting);

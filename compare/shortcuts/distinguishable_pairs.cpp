@@ -105,8 +105,7 @@ Departure distinguishable_pairs() {
     std::vector<CertifiedValue> values;
     const auto make = [&] { return std::make_unique<DistinguishableRoute>(point.chain); };
     for (const Quantity& quantity : quantities) {
-      const bool of_visibility =
-          quantity.kind == QuantityKind::visibility || quantity.kind == QuantityKind::visibility_deficit;
+      const bool of_visibility = touches_visibility(quantity);
       if (quantity.kind == QuantityKind::pattern_probability || (of_visibility && !has_alike_ends(point.chain))) {
         values.push_back({quantity, fast::Status::declined, "not served by the closed form", std::nullopt});
       } else if (of_visibility) {

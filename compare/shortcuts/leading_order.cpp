@@ -4,6 +4,7 @@
 #include <algorithm>
 #include <map>
 
+#include "compare/chain_edits.hpp"
 #include "compare/fock/departure.hpp"
 #include "compare/fock/route.hpp"
 #include "compare/formula.hpp"
@@ -179,10 +180,8 @@ class LeadingOrder {
 
 std::optional<std::string> not_served(const Chain& chain) {
   if (chain.station_count() > 3) return "more than three stations";
-  const auto has_background = [](const auto& place) { return !place.background.photons.is_zero(); };
-  const bool background = has_background(chain.left_end) || has_background(chain.right_end) ||
-                          std::any_of(chain.stations.begin(), chain.stations.end(), has_background);
-  return background ? std::optional<std::string>("a shared background is not served") : std::nullopt;
+  if (has_background(chain)) return "a shared background is not served";
+  return std::nullopt;
 }
 
 CertifiedValue as_certified(const Quantity& quantity, const Term& term) {

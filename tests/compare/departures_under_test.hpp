@@ -6,16 +6,14 @@
 
 #include <cmath>
 
-#include "compare/conventions/registry.hpp"
 #include "compare/departure_error.hpp"
-#include "compare/shortcuts/registry.hpp"
+#include "compare/registry.hpp"
 #include "tests/support/random_chain.hpp"
 
 namespace heraldgauge::compare {
 
 inline const Departure& departure_named(const std::string& id) {
-  const Departure* departure = find_shortcut(id);
-  if (departure == nullptr) departure = find_convention(id);
+  const Departure* departure = find_departure(id);
   if (departure == nullptr) throw std::runtime_error("no departure " + id);
   return *departure;
 }

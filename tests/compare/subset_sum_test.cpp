@@ -4,7 +4,7 @@
 #include <gtest/gtest.h>
 
 #include "compare/digits.hpp"
-#include "compare/shortcuts/subset_sum_binary64.hpp"
+#include "compare/subset_sum/subset_sum.hpp"
 #include "reference/enclose.hpp"
 #include "tests/support/random_chain.hpp"
 
@@ -28,7 +28,7 @@ double value_of(const SubsetSum& sum, const Quantity& quantity) {
 
 // The digits of the sum that are right, the fewest over herald probability and end patterns.
 int fewest_digits(const model::Chain& chain) {
-  const auto sum = subset_sum_binary64(chain);
+  const auto sum = subset_sum<double>(chain);
   reference::Request request;
   request.quantities = herald_and_ends();
   const auto exact = reference::enclose(chain, request);
@@ -63,11 +63,11 @@ TEST(SubsetSumBinary64, LosesItsDigitsWhereTheTermsCancel) {
 TEST(SubsetSumBinary64, RefusesWhatTheFormulaDoesNotCover) {
   model::Chain chain = test::alike_chain(1, "1/100", "1", "1/2", "0");
   chain.sources[0].kind = model::SourceKind::ideal_pair;
-  EXPECT_FALSE(subset_sum_binary64(chain));
+  EXPECT_FALSE(subset_sum<double>(chain));
   chain = test::alike_chain(1, "1/100", "1", "1/2", "0");
   chain.right_end.detectors[1].kind = model::DetectorKind::resolving;
-  EXPECT_FALSE(subset_sum_binary64(chain));
-  EXPECT_FALSE(subset_sum_binary64(test::alike_chain(largest_subset_sum_stations + 1, "1/100", "1", "1/2", "0")));
+  EXPECT_FALSE(subset_sum<double>(chain));
+  EXPECT_FALSE(subset_sum<double>(test::alike_chain(largest_subset_sum_stations + 1, "1/100", "1", "1/2", "0")));
 }
 
 }  // namespace

@@ -6,9 +6,8 @@
 
 #include "compare/audit/rule.hpp"
 #include "compare/causes/evaluate.hpp"
-#include "compare/conventions/registry.hpp"
 #include "compare/other_chain.hpp"
-#include "compare/shortcuts/registry.hpp"
+#include "compare/registry.hpp"
 #include "reference/arithmetic/decimal.hpp"
 #include "tests/support/random_chain.hpp"
 

@@ -3,7 +3,7 @@
 
 #include <gtest/gtest.h>
 
-#include "compare/shortcuts/registry.hpp"
+#include "compare/registry.hpp"
 #include "tests/support/random_chain.hpp"
 
 namespace heraldgauge::compare {
@@ -28,7 +28,7 @@ Case random_case(test::Random& random, int stations) {
 
 // lam <= 0.02 and 14 pairs: what is left out is below 1e-22 per trial.
 TEST(FockDeparture, FarCutoffIsTheModel) {
-  const Departure& cutoff = *find_shortcut("pair-cutoff");
+  const Departure& cutoff = *find_departure("pair-cutoff");
   const auto quantities = probability_quantities();
   test::for_each_case(6, 1, [&](test::Random& random) {
     const Case point = random_case(random, static_cast<int>(random() % 3));
@@ -50,7 +50,7 @@ TEST(FockDeparture, FarCutoffIsTheModel) {
 }
 
 TEST(FockDeparture, EnclosuresOverlapTheModel) {
-  const Departure& cutoff = *find_shortcut("pair-cutoff");
+  const Departure& cutoff = *find_departure("pair-cutoff");
   const auto quantities = probability_quantities();
   test::for_each_case(2, 2, [&](test::Random& random) {
     const Case point = random_case(random, static_cast<int>(random() % 2));

@@ -1,7 +1,5 @@
 // Exact formulas in machine arithmetic: the errors that they are known to have.
 
-#include <algorithm>
-
 #include "tests/compare/departures_under_test.hpp"
 
 namespace heraldgauge::compare {
@@ -41,33 +39,6 @@ TEST(PairChainBinary32, HasTheDigitsOfBinary32) {
   const auto error = error_of("pair-chain-binary32", point, "herald_probability", Rational(8));
   EXPECT_TRUE(error.certainly_within(Rational(1, 100000)));
   EXPECT_TRUE(error.certainly_beyond(Rational(1, 10000000000)));
-}
-
-TEST(Registry, HoldsWhatItMustAndEachIdOnce) {
-  EXPECT_GE(shortcuts().size(), 22U);
-  EXPECT_GE(conventions().size(), 14U);
-  std::vector<std::string> ids;
-  for (const auto* registry : {&shortcuts(), &conventions()}) {
-    for (const Departure& departure : *registry) {
-      EXPECT_TRUE(departure.evaluate) << departure.id;
-      EXPECT_TRUE(departure.touches) << departure.id;
-      EXPECT_FALSE(departure.sentence.empty() || departure.replaces.empty() || departure.claimed.empty() ||
-                   departure.source.empty())
-          << departure.id;
-      EXPECT_TRUE(departure.enclose || departure.value_is_the_machine_number) << departure.id << " is never certified";
-      ids.push_back(departure.id);
-    }
-  }
-  std::sort(ids.begin(), ids.end());
-  EXPECT_EQ(std::adjacent_find(ids.begin(), ids.end()), ids.end());
-}
-
-TEST(Settings, AreCheckedAgainstTheirRange) {
-  const Departure& cutoff = departure_named("pair-cutoff");
-  EXPECT_EQ(*checked_setting(cutoff, {}), Setting(Rational(3)));
-  EXPECT_FALSE(checked_setting(cutoff, Rational(7, 2)));
-  EXPECT_FALSE(checked_setting(cutoff, Rational(41)));
-  EXPECT_FALSE(checked_setting(departure_named("linear-loss"), Rational(1)));
 }
 
 }  // namespace
