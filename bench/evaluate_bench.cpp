@@ -3,8 +3,10 @@
 
 #include <benchmark/benchmark.h>
 
+#include <algorithm>
 #include <cmath>
 #include <optional>
+#include <string>
 
 #include "bench/chains.hpp"
 #include "bench/nested_sum.hpp"
@@ -56,6 +58,10 @@ void require_accuracy(benchmark::State& state, double value, double exact) {
   if (!(std::fabs(value / exact - 1) <= 1e-12)) state.SkipWithError("the fast evaluator is wrong by more than 1e-12");
 }
 
+const fast::Value& value_of(const std::vector<fast::Value>& values, QuantityKind kind) {
+  return *std::find_if(values.begin(), values.end(), [&](const auto& one) { return one.quantity.kind == kind; });
+}
+
 void report_points(benchmark::State& state, std::size_t points, const model::Chain& chain) {
   state.counters["points"] = static_cast<double>(points);
   state.counters["multiply_adds"] = multiply_adds(chain, model::all_quantities(false));
@@ -80,6 +86,19 @@ void herald_one_point(benchmark::State& state) {
   require_accuracy(state, herald, certified_herald(chain));
 }
 BENCHMARK(herald_one_point)->Unit(benchmark::kMicrosecond);
+
+// Other numbers of stations: the argument.
+void all_quantities_other_trunk(benchmark::State& state) {
+  const model::Chain chain = chain_of("trunk" + std::to_string(state.range(0)));
+  const auto quantities = model::all_quantities(false);
+  double gain = 0;
+  for (auto _ : state) {
+    const std::vector<fast::Value> values = fast::evaluate(chain, quantities);
+    gain = fast::to_binary64(value_of(values, QuantityKind::gain).value);
+  }
+  require_accuracy(state, gain, certified(chain, {QuantityKind::gain}));
+}
+BENCHMARK(all_quantities_other_trunk)->Arg(2)->Arg(8)->Arg(100)->Unit(benchmark::kMicrosecond);
 
 // A sweep of transmittances, one thread.
 void all_quantities_batch(benchmark::State& state) {

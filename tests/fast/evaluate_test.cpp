@@ -127,6 +127,30 @@ TEST(FastEvaluate, BytesDoNotDependOnCompanyOrThreads) {
   }
 }
 
+// Points of one structure go through the kernel together, however many; unlike ones go by themselves.
+TEST(FastEvaluate, BytesOfRandomChainsDoNotDependOnCompanyOrThreads) {
+  const std::vector<Quantity> quantities = model::all_quantities(false);
+  test::for_each_case(3, 13, [&](test::Random& random) {
+    test::ChainRecipe recipe;
+    recipe.smallest_lam = 1e-4;
+    recipe.largest_lam = 0.02;
+    recipe.largest_station_count = 2;
+    std::vector<model::Chain> chains;
+    for (int structure = 0; structure < 3; ++structure) {
+      model::Chain chain = test::random_chain(random, recipe);
+      const auto points = 1 + random() % 20;
+      for (std::uint64_t i = 0; i < points; ++i) {
+        chain.right_arms.back().transmittance = Rational(test::log_uniform(random, 0.1, 0.2));
+        chains.insert(chains.begin() + static_cast<std::ptrdiff_t>(random() % (chains.size() + 1)), chain);
+      }
+    }
+    const auto together = evaluate_all(chains, quantities, std::nullopt, 2);
+    for (std::size_t i = 0; i < chains.size(); ++i) {
+      EXPECT_TRUE(same_bytes(together[i], evaluate(chains[i], quantities))) << test::describe_chain(chains[i]);
+    }
+  });
+}
+
 TEST(FastEvaluate, DeclinesByName) {
   model::Chain chain = test::alike_chain(1, "1/100", "1/10", "1/2", "0");
   chain.stations[0].background.photons = Real(Rational(1, 10));
