@@ -92,6 +92,9 @@ struct Departure {
       enclose;
   bool value_is_the_machine_number = false;  // evaluate() is the definition, so its error is certified as it stands
 
+  // Where it is a sample: the trials that a setting stands for at a case with this herald probability.
+  std::function<double(const Setting&, double herald_probability)> trials;
+
   // Where it only changes the inputs: the case whose exact values it gives.
   std::function<model::Expected<Case>(const Case&)> transform;
 

@@ -6,6 +6,7 @@
 #include <span>
 
 #include "compare/causes/evaluate.hpp"
+#include "compare/causes/noise.hpp"
 #include "compare/parallel.hpp"
 #include "compare/registry.hpp"
 
@@ -14,8 +15,6 @@ namespace {
 
 using model::Quantity;
 
-// Samples with luck of their own are judged by their scatter, not number by number (see noise.hpp).
-constexpr std::string_view sampled_id = "shot-sampling";
 // Targets on which an explanation must prove itself before it is tried on all.
 constexpr std::size_t screening_targets = 6;
 
@@ -31,8 +30,7 @@ std::vector<Used> used_departures(const Data& data) {
   std::vector<Used> used;
   for (const std::vector<Departure>* registry : {&shortcuts(), &conventions()}) {
     for (const Departure& departure : *registry) {
-      if (departure.id == sampled_id || std::none_of(data.quantities.begin(), data.quantities.end(), departure.touches))
-        continue;
+      if (std::none_of(data.quantities.begin(), data.quantities.end(), departure.touches)) continue;
       if (!departure.setting) used.push_back({&departure, std::nullopt});
       if (!departure.setting) continue;
       for (const model::Rational& setting : departure.setting->candidates) used.push_back({&departure, setting});
@@ -157,15 +155,45 @@ void keep_best_settings(std::vector<Hypothesis>& hypotheses) {
   hypotheses = std::move(kept);
 }
 
+// Whether a sample of that size may be as far off as the numbers are. The same sample over again costs many trials, so
+// what is far too large or far too small is told first, from the standard error.
+class SampleSizes {
+ public:
+  explicit SampleSizes(const Data& data) : data_(data), deviations_(deviations_of_a_trial(data)) {
+    for (const Case& point : data.cases) {
+      const Value herald = values_of_model(point, {{model::QuantityKind::herald_probability}}).front();
+      heralds_.push_back(fast::to_binary64(herald.value));
+    }
+  }
+  bool suit(const Used& used, const std::vector<std::size_t>& targets) const {
+    double farthest = 0;
+    for (const std::size_t i : targets) {
+      if (!deviations_[i]) continue;
+      const double trials = used.departure->trials(used.setting, heralds_[data_.targets[i].point]);
+      farthest = std::max(farthest, std::abs(*deviations_[i]) * std::sqrt(trials));
+    }
+    return farthest > least_deviation && farthest < most_deviation;
+  }
+
+ private:
+  // In standard errors, of the numbers that are farthest off: a walk with its memory scatters more than free trials.
+  static constexpr double least_deviation = 0.01, most_deviation = 30;
+  const Data& data_;
+  std::vector<std::optional<double>> deviations_;
+  std::vector<double> heralds_;
+};
+
 struct Pair {
   Used outer, inner;
 };
 
+// No sample under another departure is sought: it would take the luck of one seed to find it.
 std::vector<Pair> pairs_of(const std::vector<Used>& used) {
   std::vector<Pair> pairs;
   for (const Used& outer : used) {
     for (const Used& inner : used) {
-      if (outer.departure != inner.departure && composed(outer, inner)) pairs.push_back({outer, inner});
+      if (inner.departure->trials || outer.departure == inner.departure || !composed(outer, inner)) continue;
+      pairs.push_back({outer, inner});
     }
   }
   return pairs;
@@ -177,9 +205,12 @@ std::vector<Hypothesis> single_departures(const Data& data, unsigned threads) {
   const std::vector<Used> used = used_departures(data);
   const std::vector<std::size_t> targets = all_targets(data);
   const std::vector<std::size_t> first = screening(data);
+  const SampleSizes sizes(data);
   std::vector<Hypothesis> hypotheses(used.size());
   for_each_index(used.size(), threads, [&](std::size_t i) {
-    if (!survives(data, first, first.size() / 2, evaluator_of(used[i]))) return;
+    const bool sampled = static_cast<bool>(used[i].departure->trials);
+    if (sampled && !sizes.suit(used[i], first)) return;
+    if (!survives(data, first, sampled ? 0 : first.size() / 2, evaluator_of(used[i]))) return;
     Hypothesis& one = hypotheses[i];
     one.parts = {part_of(used[i])};
     one.complexity = complexity_of(used[i]);

@@ -3,6 +3,7 @@
 #include <fmt/format.h>
 
 #include <algorithm>
+#include <array>
 #include <cmath>
 
 #include "compare/causes/evaluate.hpp"
@@ -19,34 +20,59 @@ constexpr double largest_correlation = 0.5;  // between neighbours
 constexpr double least_within_one = 0.45;    // share of a normal sample within one standard deviation is 0.68
 constexpr double most_within_one = 0.92;
 
-// The probability per trial of what a quantity is conditional on; nothing for quantities that are no simple share.
-std::optional<double> events_per_trial(const Case& point, QuantityKind kind) {
+// What is counted at a point.
+struct Shares {
+  double herald, gain, rectilinear, diagonal;
+};
+std::optional<Shares> shares_of(const Case& point) {
   using enum QuantityKind;
-  if (kind == herald_probability || kind == pattern_probability) return 1;
-  if (kind != end_pattern && kind != model::QuantityKind::gain && kind != qber_rectilinear && kind != qber_diagonal)
-    return std::nullopt;
-  const auto values = values_of_model(point, {{herald_probability}, {model::QuantityKind::gain}});
-  const bool known = values[0].status == fast::Status::computed && values[1].status == fast::Status::computed;
-  if (!known) return std::nullopt;
-  const double herald = fast::to_binary64(values[0].value);
-  const bool of_events = kind == qber_rectilinear || kind == qber_diagonal;
-  return of_events ? herald * fast::to_binary64(values[1].value) : herald;
+  std::array<double, 4> shares{};
+  std::size_t next = 0;
+  for (const Value& value :
+       values_of_model(point, {{herald_probability}, {gain}, {qber_rectilinear}, {qber_diagonal}})) {
+    if (value.status != fast::Status::computed) return std::nullopt;
+    shares[next++] = fast::to_binary64(value.value);
+  }
+  return Shares{shares[0], shares[1], shares[2], shares[3]};
 }
 
-// Deviation in standard deviations of a single trial, of every target of that kind; the others have none.
-std::vector<std::optional<double>> deviations(const Data& data) {
-  std::vector<std::optional<double>> result;
-  for (const Target& target : data.targets) {
-    const auto events = events_per_trial(data.cases[target.point], data.quantities[target.quantity].kind);
-    const double unit = std::ldexp(1.0, static_cast<int>(target.exponent));
-    const double variance = target.exact * (1 - target.exact * unit);  // in units of 2^exponent
-    if (!events || variance <= 0 || unit == 0) {
-      result.emplace_back();
-    } else {
-      result.emplace_back((target.given - target.exact) * std::sqrt(unit * *events / variance));
+// (1-x)/x: the variance of a share of one trial over its square.
+double relative_variance(double share) { return (1 - share) / share; }
+
+// e (1-e) h2'(e)^2: the variance of the entropy of an error rate of one event.
+double entropy_variance(double rate) {
+  if (rate <= 0 || rate >= 1) return 0;
+  const double slope = std::log2((1 - rate) / rate);
+  return rate * (1 - rate) * slope * slope;
+}
+
+// The variance of a quantity from one trial over its square, to first order.
+double relative_variance(const Shares& shares, const model::Protocol& protocol, QuantityKind kind, double value) {
+  using enum QuantityKind;
+  const double f = protocol.error_correction_factor.get_d(), events = shares.herald * shares.gain;
+  switch (kind) {
+    case herald_probability:
+    case pattern_probability:
+      return relative_variance(value);
+    case trials_per_herald:
+      return relative_variance(shares.herald);
+    case end_pattern:
+    case gain:
+      return relative_variance(value) / shares.herald;
+    case qber_rectilinear:
+    case qber_diagonal:
+      return relative_variance(value) / events;
+    case key_fraction:
+    case key_rate: {
+      const double kept = value / (shares.gain * protocol.sifting.get_d() * (kind == key_rate ? shares.herald : 1));
+      const double of_entropies =
+          (f * f * entropy_variance(shares.rectilinear) + entropy_variance(shares.diagonal)) / (kept * kept * events);
+      return of_entropies + relative_variance(shares.gain) / shares.herald +
+             (kind == key_rate ? relative_variance(shares.herald) : 0);
     }
+    default:
+      return 0;
   }
-  return result;
 }
 
 bool looks_normal(const std::vector<double>& scaled) {
@@ -67,8 +93,25 @@ bool looks_normal(const std::vector<double>& scaled) {
 
 }  // namespace
 
+std::vector<std::optional<double>> deviations_of_a_trial(const Data& data) {
+  std::vector<std::optional<Shares>> shares;
+  for (const Case& point : data.cases) shares.push_back(shares_of(point));
+  std::vector<std::optional<double>> result(data.targets.size());
+  for (std::size_t i = 0; i < data.targets.size(); ++i) {
+    const Target& target = data.targets[i];
+    if (!shares[target.point] || target.exact == 0) continue;
+    const double value = std::ldexp(target.exact, static_cast<int>(target.exponent));
+    const double variance = relative_variance(*shares[target.point], data.cases[target.point].chain.protocol,
+                                              data.quantities[target.quantity].kind, value);
+    if (variance > 0 && std::isfinite(variance)) {
+      result[i] = (target.given - target.exact) / (std::abs(target.exact) * std::sqrt(variance));
+    }
+  }
+  return result;
+}
+
 std::vector<Hypothesis> shot_sampling(const Data& data) {
-  const std::vector<std::optional<double>> single = deviations(data);
+  const std::vector<std::optional<double>> single = deviations_of_a_trial(data);
   std::vector<double> scaled;
   double squares = 0;
   for (const auto& one : single) {

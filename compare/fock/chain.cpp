@@ -42,7 +42,15 @@ Sectors<Number> zero_sectors(const Arithmetic<Number>& number, long cut, long se
 
 template <class Number>
 Chain<Number>::Chain(const Arithmetic<Number>& number, const Description& description)
-    : number_(number), description_(description) {
+    : number_(number),
+      description_(description),
+      left_loss_(number, description.chain.left_arms.front().transmittance),
+      right_loss_(number, description.chain.right_arms.back().transmittance) {
+  const model::Chain& chain = description_.chain;
+  for (std::size_t k = 0; k < chain.station_count(); ++k) {
+    interference_.push_back(number_(chain.right_arms[k].transmittance * chain.left_arms[k + 1].transmittance *
+                                    chain.stations[k].indistinguishability));
+  }
   for (const auto& weights : description_.weights) {
     std::vector<Number> values;
     for (const model::Real& weight : weights) values.push_back(number_(weight));
@@ -58,10 +66,10 @@ long Chain<Number>::most_sectors() const {
 }
 
 template <class Number>
-Sectors<Number> Chain<Number>::end_sectors(const model::End& end, const model::Arm& arm, std::size_t source,
+Sectors<Number> Chain<Number>::end_sectors(const model::End& end, const Loss<Number>& loss, std::size_t source,
                                            const Ask2& asks, const Direction<Number>& along, long sectors) const {
   const auto answer = [&](std::size_t j) {
-    return behind_loss(number_, arm.transmittance,
+    return behind_loss(number_, loss,
                        response(number_, end.detectors[j], asks[j], description_.rule, ClickPart::whole, cut(source)));
   };
   return end_part(number_, along, answer(model::plus), answer(model::cross), cut(source), sectors);
@@ -102,8 +110,7 @@ typename Chain<Number>::State Chain<Number>::first_state(const Ask2& left, const
                                                          long sectors) const {
   State state;
   add_weighted(state, 0, 0,
-               end_sectors(description_.chain.left_end, description_.chain.left_arms.front(), 0, left,
-                           direction(number_, degrees), sectors));
+               end_sectors(description_.chain.left_end, left_loss_, 0, left, direction(number_, degrees), sectors));
   return state;
 }
 
@@ -162,11 +169,7 @@ template <class Number>
 Sectors<Number> Chain<Number>::through_station(std::size_t k, const Sectors<Number>& state,
                                                const std::vector<Outcome>& outcomes, Minus minus) const {
   const auto sectors = static_cast<long>(state.size()) - 1;
-  const model::Chain& chain = description_.chain;
-  const auto interference = powers(number_,
-                                   number_(chain.right_arms[k].transmittance * chain.left_arms[k + 1].transmittance *
-                                           chain.stations[k].indistinguishability),
-                                   sectors);
+  const auto interference = powers(number_, interference_[k], sectors);
   auto out = zero_sectors(number_, cut(k + 1), sectors);
   for (const Outcome& outcome : outcomes) {
     const auto factor = [&](long sign, long delta) {
@@ -236,8 +239,7 @@ template <class Number>
 std::vector<Number> Chain<Number>::herald() const {
   const model::Chain& chain = description_.chain;
   if (chain.station_count() == 0 && !description_.by_total_pairs) return {number_(1L)};
-  const auto right =
-      end_sectors(chain.right_end, chain.right_arms.back(), chain.station_count(), {}, direction(number_, 0), 0);
+  const auto right = end_sectors(chain.right_end, right_loss_, chain.station_count(), {}, direction(number_, 0), 0);
   return closed(contracted(first_state({}, 0, 0), accepted(), Minus::plain, 0), right);
 }
 
@@ -247,7 +249,7 @@ std::vector<Number> Chain<Number>::pattern(const model::Pattern& pattern) const 
   std::vector<std::vector<Outcome>> outcomes;
   for (const auto& asks : pattern.stations) outcomes.push_back({Outcome{asks, false}});
   const long sectors = most_sectors();
-  const auto right = end_sectors(chain.right_end, chain.right_arms.back(), chain.station_count(), pattern.right,
+  const auto right = end_sectors(chain.right_end, right_loss_, chain.station_count(), pattern.right,
                                  direction(number_, chain.right_end.analyser_deg), sectors);
   return closed(
       contracted(first_state(pattern.left, chain.left_end.analyser_deg, sectors), outcomes, Minus::plain, sectors),
@@ -269,11 +271,15 @@ std::vector<EndTable<Number>> Chain<Number>::tables(const Rational& left, const 
     }
     return tables[total].joint[l][r];
   };
+  std::array<Sectors<Number>, 4> right_parts;
+  for (std::size_t r = 0; r < 4; ++r) {
+    right_parts[r] = end_sectors(chain.right_end, right_loss_, chain.station_count(), end_asks(r),
+                                 direction(number_, right), sectors);
+  }
   for (std::size_t l = 0; l < 4; ++l) {
     const State state = contracted(first_state(end_asks(l), left, sectors), accepted(), minus, sectors);
     for (std::size_t r = 0; r < 4; ++r) {
-      const auto values = closed(state, end_sectors(chain.right_end, chain.right_arms.back(), chain.station_count(),
-                                                    end_asks(r), direction(number_, right), sectors));
+      const auto values = closed(state, right_parts[r]);
       for (std::size_t total = 0; total < values.size(); ++total) entry(total, l, r) = values[total];
     }
   }
@@ -316,7 +322,7 @@ std::vector<std::vector<Number>> Chain<Number>::coincidences(const std::vector<R
       contracted(first_state(asks, chain.left_end.analyser_deg, sectors), accepted(), Minus::corrected, sectors);
   std::vector<std::vector<Number>> values;
   for (const Rational& degrees : right_deg) {
-    values.push_back(closed(state, end_sectors(chain.right_end, chain.right_arms.back(), chain.station_count(), asks,
+    values.push_back(closed(state, end_sectors(chain.right_end, right_loss_, chain.station_count(), asks,
                                                direction(number_, degrees), sectors)));
   }
   return values;

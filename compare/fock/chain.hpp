@@ -74,7 +74,7 @@ class Chain {
   const Part& part(std::size_t k, std::size_t polarisation, const Outcome& outcome, ClickPart click,
                    long sectors) const;
   void add_weighted(State& out, std::size_t total, std::size_t source, const Sectors<Number>& unweighted) const;
-  Sectors<Number> end_sectors(const model::End& end, const model::Arm& arm, std::size_t source, const Ask2& asks,
+  Sectors<Number> end_sectors(const model::End& end, const Loss<Number>& loss, std::size_t source, const Ask2& asks,
                               const Direction<Number>& along, long sectors) const;
   std::vector<Number> closed(const State& state, const Sectors<Number>& right) const;
   std::vector<std::vector<Outcome>> accepted() const;
@@ -83,6 +83,8 @@ class Chain {
   Arithmetic<Number> number_;
   Description description_;
   std::vector<std::vector<Number>> weights_;
+  Loss<Number> left_loss_, right_loss_;
+  std::vector<Number> interference_;  // t_R t_L v of each station
   mutable std::vector<std::unique_ptr<Part>> parts_;
 };
 

@@ -50,12 +50,12 @@ Direction<Number> direction(const Arithmetic<Number>& number, const Rational& de
 }
 
 template <class Number>
-std::vector<Number> behind_loss(const Arithmetic<Number>& number, const model::Real& transmittance,
+std::vector<Number> behind_loss(const Arithmetic<Number>& number, const Loss<Number>& loss,
                                 const std::vector<Number>& response) {
   const auto last = static_cast<long>(response.size()) - 1;
   const Counting<Number> count(number, last);
-  const auto kept = powers(number, number(transmittance), last);
-  const auto lost = powers(number, number(model::Real(1) - transmittance), last);
+  const auto kept = powers(number, loss.kept, last);
+  const auto lost = powers(number, loss.lost, last);
   std::vector<Number> result;
   for (long n = 0; n <= last; ++n) {
     Number sum = number(0L);
@@ -99,11 +99,11 @@ template Direction<float> direction(const Arithmetic<float>&, const Rational&);
 template Direction<double> direction(const Arithmetic<double>&, const Rational&);
 template Direction<Interval> direction(const Arithmetic<Interval>&, const Rational&);
 template Direction<Rational> direction(const Arithmetic<Rational>&, const Rational&);
-template std::vector<float> behind_loss(const Arithmetic<float>&, const model::Real&, const std::vector<float>&);
-template std::vector<double> behind_loss(const Arithmetic<double>&, const model::Real&, const std::vector<double>&);
-template std::vector<Interval> behind_loss(const Arithmetic<Interval>&, const model::Real&,
+template std::vector<float> behind_loss(const Arithmetic<float>&, const Loss<float>&, const std::vector<float>&);
+template std::vector<double> behind_loss(const Arithmetic<double>&, const Loss<double>&, const std::vector<double>&);
+template std::vector<Interval> behind_loss(const Arithmetic<Interval>&, const Loss<Interval>&,
                                            const std::vector<Interval>&);
-template std::vector<Rational> behind_loss(const Arithmetic<Rational>&, const model::Real&,
+template std::vector<Rational> behind_loss(const Arithmetic<Rational>&, const Loss<Rational>&,
                                            const std::vector<Rational>&);
 template Sectors<float> end_part(const Arithmetic<float>&, const Direction<float>&, const std::vector<float>&,
                                  const std::vector<float>&, long, long);

@@ -21,9 +21,17 @@ struct Direction {
 template <class Number>
 Direction<Number> direction(const Arithmetic<Number>& number, const Rational& degrees);
 
+// An arm: t and 1-t, each rounded from the exact number.
+template <class Number>
+struct Loss {
+  Loss(const Arithmetic<Number>& number, const model::Real& transmittance)
+      : kept(number(transmittance)), lost(number(model::Real(1) - transmittance)) {}
+  Number kept, lost;
+};
+
 // f~(n) = sum_k C(n,k) t^k (1-t)^(n-k) f(k).
 template <class Number>
-std::vector<Number> behind_loss(const Arithmetic<Number>& number, const model::Real& transmittance,
+std::vector<Number> behind_loss(const Arithmetic<Number>& number, const Loss<Number>& loss,
                                 const std::vector<Number>& response);
 
 // Element (a, b) of sector D: a + D ket, a bra photons in H, b ket, b + D bra photons in V, a + b + D <= cut; without

@@ -30,20 +30,28 @@ using reference::Interval;
 
 constexpr long most_total = 12;
 
-// Weights lam^n (1, p/2 for an ideal pair, where p is the small parameter).
-Description expansion(const Chain& chain) {
+// The terms of up to `most` pairs in all. Weights lam^n (1, p/2 for an ideal pair, where p is the small parameter).
+Description expansion(const Chain& chain, long most) {
   Description description;
   description.chain = chain;
   description.by_total_pairs = true;
-  const auto enough = std::min<long>(most_total, 2 * static_cast<long>(chain.sources.size()) + 4);
+  description.most_total = most;
   for (const model::Source& source : chain.sources) {
     const bool ideal = source.kind == model::SourceKind::ideal_pair;
     std::vector<Real> weights{Real(1)};
-    for (long n = 1; n <= (ideal ? 1 : enough); ++n) weights.push_back(weights.back() * source.pair_parameter);
-    if (ideal) weights[1] = weights[1] / Real(2);
+    for (long n = 1; n <= (ideal ? std::min(most, 1L) : most); ++n)
+      weights.push_back(weights.back() * source.pair_parameter);
+    if (ideal && most > 0) weights[1] = weights[1] / Real(2);
     description.weights.push_back(std::move(weights));
   }
   return description;
+}
+
+// How far to expand, one after the other until a term does not vanish: the work grows fast. Dark counts alone need no
+// pair, a herald without them about one from each source.
+std::vector<long> stages(const Chain& chain) {
+  const auto sources = static_cast<long>(chain.sources.size());
+  return {0, sources, std::min(most_total, 2 * sources + 4)};
 }
 
 bool is_multiple_of_45(const Rational& degrees) { return Rational(degrees / 45).get_den() == 1; }
@@ -51,38 +59,41 @@ bool is_multiple_of_45(const Rational& degrees) { return Rational(degrees / 45).
 // The orders at which sums vanish are told in exact rationals: no parameter strictly inside its range matters for that.
 class LeadingOrders {
  public:
-  explicit LeadingOrders(const Chain& chain)
-      : exact_(Arithmetic<Rational>{}, expansion(reference::zero_pattern_of(chain))), chain_(chain) {}
+  explicit LeadingOrders(const Chain& chain) : chain_(reference::zero_pattern_of(chain)), stages_(stages(chain)) {}
 
   // The first total at which `part` of the exact tables is not zero; nothing where it is zero as far as was expanded.
   template <class Part>
   std::optional<std::size_t> first(Basis basis, Part&& part) {
-    auto found = tables_.find(basis);
-    if (found == tables_.end()) found = tables_.emplace(basis, exact_.ends(basis)).first;
-    for (std::size_t total = 0; total < found->second.size(); ++total) {
-      if (part(found->second[total]) != 0) return total;
+    for (const long most : stages_) {
+      auto found = tables_.find({basis, most});
+      if (found == tables_.end()) found = tables_.emplace(std::pair(basis, most), expanded(most).ends(basis)).first;
+      for (std::size_t total = 0; total < found->second.size(); ++total) {
+        if (part(found->second[total]) != 0) return total;
+      }
     }
     return std::nullopt;
   }
   std::optional<std::size_t> first_herald() {
-    if (chain_.station_count() == 0) return 0;
-    const auto heralds = exact_.herald();
-    for (std::size_t total = 0; total < heralds.size(); ++total) {
-      if (heralds[total] != 0) return total;
+    for (const long most : stages_) {
+      const auto heralds = expanded(most).herald();
+      for (std::size_t total = 0; total < heralds.size(); ++total) {
+        if (heralds[total] != 0) return total;
+      }
     }
     return std::nullopt;
   }
 
  private:
-  fock::Chain<Rational> exact_;
-  const Chain& chain_;
-  std::map<Basis, std::vector<EndTable<Rational>>> tables_;
+  fock::Chain<Rational> expanded(long most) const { return {Arithmetic<Rational>{}, expansion(chain_, most)}; }
+
+  Chain chain_;
+  std::vector<long> stages_;
+  std::map<std::pair<Basis, long>, std::vector<EndTable<Rational>>> tables_;
 };
 
 class LeadingOrder {
  public:
-  LeadingOrder(const Chain& chain, reference::Precision bits)
-      : chain_(chain), bits_(bits), orders_(chain), values_(Arithmetic<Interval>{bits}, expansion(chain)) {}
+  LeadingOrder(const Chain& chain, reference::Precision bits) : chain_(chain), bits_(bits), orders_(chain) {}
 
   Term value(const Quantity& quantity) {
     switch (quantity.kind) {
@@ -126,12 +137,16 @@ class LeadingOrder {
   Term herald() {
     if (chain_.station_count() == 0) return computed(Interval(1L, bits_));
     const auto order = orders_.first_herald();
-    return order ? computed(values_.herald()[*order]) : vanishes();
+    return order ? computed(expanded(static_cast<long>(*order)).herald()[*order]) : vanishes();
   }
+  fock::Chain<Interval> expanded(long most) const { return {Arithmetic<Interval>{bits_}, expansion(chain_, most)}; }
   const EndTable<Interval>& table(Basis basis, std::size_t order) {
-    auto found = tables_.find(basis);
-    if (found == tables_.end()) found = tables_.emplace(basis, values_.ends(basis)).first;
-    return found->second[order];
+    auto found = tables_.find({basis, order});
+    if (found == tables_.end()) {
+      const auto by_total = expanded(static_cast<long>(order)).ends(basis);
+      found = tables_.emplace(std::pair(basis, order), by_total[order]).first;
+    }
+    return found->second;
   }
   Term both(Basis basis) {
     const auto order = orders_.first(basis, [](const auto& exact) { return reference::both_ends_click(exact); });
@@ -155,27 +170,32 @@ class LeadingOrder {
 
   // The coincidence as a function of the right angle, at the first order at which it does not vanish everywhere.
   Term visibility(bool deficit) {
-    const long points = 2 * values_.cut(chain_.station_count()) + 1;
-    std::vector<Rational> angles;
-    for (long j = 0; j < points; ++j) angles.push_back(Rational(180 * j) / points);
-    const auto by_angle = values_.coincidences(angles);
-    for (std::size_t order = 0; order < by_angle.front().size(); ++order) {
-      std::vector<Interval> here;
-      for (const auto& at_angle : by_angle) here.push_back(at_angle[order]);
-      if (std::all_of(here.begin(), here.end(), [](const Interval& x) { return x.is_exactly_zero(); })) continue;
-      const auto extremes = reference::extremes_of(fock::profile_from(here));
-      const Interval smallest = extremes.mean + extremes.smallest;
-      const Interval sum = extremes.mean * 2L + extremes.largest + extremes.smallest;
-      return computed(deficit ? smallest * 2L / sum : Interval(extremes.largest - extremes.smallest) / sum);
+    const auto coincidences = first_coincidences();
+    if (!coincidences) return vanishes();
+    const auto extremes = reference::extremes_of(fock::profile_from(*coincidences));
+    const Interval smallest = extremes.mean + extremes.smallest;
+    const Interval sum = extremes.mean * 2L + extremes.largest + extremes.smallest;
+    return computed(deficit ? smallest * 2L / sum : Interval(extremes.largest - extremes.smallest) / sum);
+  }
+  std::optional<std::vector<Interval>> first_coincidences() const {
+    for (const long most : stages(chain_)) {
+      std::vector<Rational> angles;
+      for (long j = 0; j <= 2 * most; ++j) angles.push_back(Rational(180 * j) / (2 * most + 1));
+      const auto by_angle = expanded(most).coincidences(angles);
+      for (std::size_t order = 0; order < by_angle.front().size(); ++order) {
+        std::vector<Interval> here;
+        for (const auto& at_angle : by_angle) here.push_back(at_angle[order]);
+        const auto vanishes_there = [](const Interval& x) { return x.is_exactly_zero(); };
+        if (!std::all_of(here.begin(), here.end(), vanishes_there)) return here;
+      }
     }
-    return vanishes();
+    return std::nullopt;
   }
 
   const Chain& chain_;
   reference::Precision bits_;
   LeadingOrders orders_;
-  fock::Chain<Interval> values_;
-  std::map<Basis, std::vector<EndTable<Interval>>> tables_;
+  std::map<std::pair<Basis, std::size_t>, EndTable<Interval>> tables_;
 };
 
 std::optional<std::string> not_served(const Chain& chain) {

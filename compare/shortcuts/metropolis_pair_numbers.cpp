@@ -44,6 +44,9 @@ Departure metropolis_pair_numbers() {
       SettingRange{"steps", "steps of the walk", 1, 100'000'000, true, 20'000, {2'000, 20'000, 200'000}};
   departure.touches = is_conditional;
   departure.value_is_the_machine_number = true;
+  departure.trials = [](const Setting& setting, double herald_probability) {
+    return setting->get_d() / herald_probability;  // each step is a heralded trial
+  };
   departure.evaluate = [](const Case& point, const std::vector<Quantity>& quantities, const Setting& setting) {
     return by_walk(point, quantities, setting->get_num().get_ui());
   };

@@ -1,6 +1,13 @@
+#include <algorithm>
+
 #include "compare/sampling/departure.hpp"
 
 namespace heraldgauge::compare {
+namespace {
+
+constexpr std::uint64_t most_trials = 5'000'000;
+
+}  // namespace
 
 using model::Rational;
 
@@ -16,8 +23,11 @@ Departure shot_sampling_to_error() {
                    Rational(1, 100), {Rational(1, 10), Rational(1, 100)}};
   departure.touches = is_sampled;
   departure.value_is_the_machine_number = true;
+  departure.trials = [](const Setting& setting, double herald_probability) {
+    const auto heralds = static_cast<double>(heralds_for(setting->get_d()));
+    return std::min(heralds / herald_probability, static_cast<double>(most_trials));
+  };
   departure.evaluate = [](const Case& point, const std::vector<model::Quantity>& quantities, const Setting& setting) {
-    constexpr std::uint64_t most_trials = 5'000'000;
     return by_sample(point, quantities, {most_trials, heralds_for(setting->get_d())});
   };
   return departure;
