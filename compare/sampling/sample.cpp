@@ -25,18 +25,23 @@ std::pair<std::size_t, std::size_t> drawn(const EndTable<double>& table, double 
 Counts sampled(TrialModel& trials, const std::vector<Basis>& bases, const Stop& stop, std::uint64_t seed) {
   Random64 random(seed);
   Counts counts;
-  for (const Basis basis : bases) counts.ends[basis] = {};
+  std::map<Basis, Random64> random_of_ends;  // apart, so that a count does not depend on what else is counted
+  for (const Basis basis : bases) {
+    counts.ends[basis] = {};
+    random_of_ends.emplace(basis, Random64(seed + 1 + static_cast<std::uint64_t>(basis)));
+  }
   const auto goes_on = [&] {
     return counts.trials < stop.trials && (stop.heralds == 0 || counts.heralds < stop.heralds);
   };
+  PairNumbers pairs;
   while (goes_on()) {
     ++counts.trials;
-    const PairNumbers pairs = trials.draw_pairs(random);
+    trials.draw_pairs(random, pairs);
     const double herald = trials.herald(pairs);
     if (!(random.uniform() < herald)) continue;
     ++counts.heralds;
     for (const Basis basis : bases) {
-      const auto [l, r] = drawn(trials.ends(pairs, basis), herald, random);
+      const auto [l, r] = drawn(trials.ends(pairs, basis), herald, random_of_ends.at(basis));
       ++counts.ends[basis][l][r];
     }
   }

@@ -27,13 +27,12 @@ TrialModel::TrialModel(const model::Chain& chain) : chain_(chain) {
   }
 }
 
-PairNumbers TrialModel::draw_pairs(Random64& random) const {
-  PairNumbers pairs;
+void TrialModel::draw_pairs(Random64& random, PairNumbers& pairs) const {
+  pairs.clear();
   for (const auto& cumulative : cumulative_) {
     const auto found = std::upper_bound(cumulative.begin(), cumulative.end(), random.uniform());
     pairs.push_back(std::min<long>(found - cumulative.begin(), static_cast<long>(cumulative.size()) - 1));
   }
-  return pairs;
 }
 
 double TrialModel::log_probability(const PairNumbers& pairs) const {
@@ -48,7 +47,8 @@ double TrialModel::log_probability(const PairNumbers& pairs) const {
 
 // The chain whose sources emit exactly these numbers of pairs.
 TrialModel::Known& TrialModel::known(const PairNumbers& pairs) {
-  Known& known = known_[pairs];
+  if (last_ == nullptr || last_->first != pairs) last_ = &*known_.try_emplace(pairs).first;
+  Known& known = last_->second;
   if (known.chain) return known;
   fock::Description description;
   description.chain = chain_;

@@ -18,7 +18,8 @@ class TrialModel {
   // Without shared background.
   explicit TrialModel(const model::Chain& chain);
 
-  PairNumbers draw_pairs(Random64& random) const;
+  // Draws into `pairs`, which keeps its memory from trial to trial.
+  void draw_pairs(Random64& random, PairNumbers& pairs) const;
   // log of the probability of these pair numbers; -infinity where they cannot occur.
   double log_probability(const PairNumbers& pairs) const;
 
@@ -37,6 +38,7 @@ class TrialModel {
   model::Chain chain_;
   std::vector<std::vector<double>> cumulative_;  // of the pair numbers of each source
   std::map<PairNumbers, Known> known_;
+  std::map<PairNumbers, Known>::value_type* last_ = nullptr;  // the same numbers often come again
 };
 
 }  // namespace heraldgauge::compare

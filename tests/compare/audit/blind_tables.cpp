@@ -2,6 +2,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <functional>
 #include <memory>
 
 #include "compare/audit/rule.hpp"
@@ -21,6 +22,7 @@ using model::Quantity;
 using model::Rational;
 
 constexpr double telling_distance = 3;  // tolerances
+constexpr int frames_a_pair = 20;       // some pairs never show: one undoes the other, or hides it
 
 std::string number(double x, int digits) {
   return reference::decimal(Rational(x), digits, reference::Direction::nearest);
@@ -73,7 +75,8 @@ std::vector<Quantity> random_quantities(Random& random) {
                                     "qber_rectilinear",   "qber_diagonal",
                                     "key_fraction",       "key_rate",
                                     "end_pattern_1010",   "end_pattern_1001",
-                                    "visibility",         "trials_per_herald"};
+                                    "visibility",         "visibility_deficit",
+                                    "trials_per_herald",  "capacity_arm"};
   std::shuffle(names.begin(), names.end(), random);
   names.resize(1 + random() % 3);
   std::vector<Quantity> quantities;
@@ -189,13 +192,21 @@ struct Planted {
   Setting setting;
 };
 
-Planted random_departure(Random& random) {
+// Every departure is as likely as any other; frames are then drawn until it applies.
+Planted random_departure(Random& random, const std::function<bool(const Departure&)>& suits) {
   std::vector<const Departure*> all;
-  for (const Departure& one : compare::shortcuts()) all.push_back(&one);
-  for (const Departure& one : compare::conventions()) all.push_back(&one);
+  for (const auto* registry : {&compare::shortcuts(), &compare::conventions()}) {
+    for (const Departure& one : *registry) {
+      if (suits(one)) all.push_back(&one);
+    }
+  }
   const Departure* departure = pick(random, all);
   if (!departure->setting) return {departure, std::nullopt};
   return {departure, pick(random, departure->setting->candidates)};
+}
+
+bool touches_some(const Planted& planted, const Frame& frame) {
+  return std::any_of(frame.quantities.begin(), frame.quantities.end(), planted.departure->touches);
 }
 
 Evaluate evaluate_of(const Planted& planted) {
@@ -204,8 +215,7 @@ Evaluate evaluate_of(const Planted& planted) {
   };
 }
 
-std::optional<Evaluate> evaluate_of(const Planted& outer, const Planted& inner) {
-  if (!outer.departure->transform || outer.departure == inner.departure) return std::nullopt;
+Evaluate evaluate_of(const Planted& outer, const Planted& inner) {
   return [outer, inner](const Case& point, const std::vector<Quantity>& quantities) {
     const auto changed = outer.departure->transform(point);
     if (!changed) return std::vector<compare::Value>(quantities.size());
@@ -217,25 +227,27 @@ std::string note_of(const Planted& planted) {
   return planted.departure->id + (planted.setting ? " " + planted.setting->get_str() : "");
 }
 
-std::optional<BlindTable> one_planted(Random& random, const Frame& frame, const Printed& exact) {
-  const Planted planted = random_departure(random);
+std::optional<BlindTable> one_planted(const Planted& planted, const Frame& frame) {
+  if (!touches_some(planted, frame)) return std::nullopt;
   const auto numbers = printed_table(frame, evaluate_of(planted));
-  if (!numbers || !tells_apart(frame, *numbers, exact)) return std::nullopt;
+  if (!numbers) return std::nullopt;
+  const auto exact = printed_table(frame, compare::values_of_model);
+  if (!exact || !tells_apart(frame, *numbers, *exact)) return std::nullopt;
   return BlindTable{frame.text, csv_of(frame, *numbers), {planted.departure->id}, note_of(planted)};
 }
 
-std::optional<BlindTable> two_planted(Random& random, const Frame& frame, const Printed& exact) {
-  const Planted outer = random_departure(random), inner = random_departure(random);
-  const auto both = evaluate_of(outer, inner);
-  if (!both) return std::nullopt;
-  const auto numbers = printed_table(frame, *both);
+std::optional<BlindTable> two_planted(const Planted& outer, const Planted& inner, const Frame& frame) {
+  if (!touches_some(outer, frame) || !touches_some(inner, frame)) return std::nullopt;
+  const auto numbers = printed_table(frame, evaluate_of(outer, inner));
+  if (!numbers) return std::nullopt;
+  const auto exact = printed_table(frame, compare::values_of_model);
   const auto first = printed_table(frame, evaluate_of(outer));
   const auto second = printed_table(frame, evaluate_of(inner));
-  if (!numbers || !first || !second) return std::nullopt;
-  for (const Printed* other : {&exact, &*first, &*second}) {
+  if (!exact || !first || !second) return std::nullopt;
+  for (const Printed* other : {&*exact, &*first, &*second}) {
     if (!tells_apart(frame, *numbers, *other)) return std::nullopt;
   }
-  if (!tells_apart(frame, *first, exact) || !tells_apart(frame, *second, exact)) return std::nullopt;
+  if (!tells_apart(frame, *first, *exact) || !tells_apart(frame, *second, *exact)) return std::nullopt;
   return BlindTable{frame.text,
                     csv_of(frame, *numbers),
                     {outer.departure->id, inner.departure->id},
@@ -269,14 +281,20 @@ BlindTable clean_table(Random& random, Evaluator evaluator) {
   }
 }
 
-BlindTable planted_table(Random& random, int departures) {
+BlindTable table_with_one(Random& random) {
+  const Planted planted = random_departure(random, [](const Departure&) { return true; });
   for (;;) {
-    const Frame frame = random_frame(random);
-    const auto exact = printed_table(frame, compare::values_of_model);
-    if (!exact) continue;
-    for (int attempt = 0; attempt < 4; ++attempt) {
-      const auto table = departures == 1 ? one_planted(random, frame, *exact) : two_planted(random, frame, *exact);
-      if (table) return *table;
+    if (const auto table = one_planted(planted, random_frame(random))) return *table;
+  }
+}
+
+BlindTable table_with_two(Random& random) {
+  for (;;) {
+    const Planted outer =
+        random_departure(random, [](const Departure& one) { return static_cast<bool>(one.transform); });
+    const Planted inner = random_departure(random, [&](const Departure& one) { return &one != outer.departure; });
+    for (int attempt = 0; attempt < frames_a_pair; ++attempt) {
+      if (const auto table = two_planted(outer, inner, random_frame(random))) return *table;
     }
   }
 }

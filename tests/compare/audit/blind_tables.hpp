@@ -21,8 +21,10 @@ enum class Evaluator { reference, fast };
 
 BlindTable clean_table(Random& random, Evaluator evaluator);
 
-// Drawn until some number moves by more than three tolerances; with two departures, until each alone does and the two
-// together are neither of them.
-BlindTable planted_table(Random& random, int departures);
+// A departure of the registries with one of its candidate settings, over scenarios drawn until it applies and some
+// number moves by more than three tolerances; two, a change of the inputs under another departure, drawn until each
+// alone moves some number so, and the two together do from each alone.
+BlindTable table_with_one(Random& random);
+BlindTable table_with_two(Random& random);
 
 }  // namespace heraldgauge::test
