@@ -62,6 +62,14 @@ TEST(ShotSampling, SameSeedSameSample) {
   EXPECT_NE(sampled(first, {}, {5000, 0}, 3).heralds, sampled(second, {}, {5000, 0}, 4).heralds);
 }
 
+TEST(ShotSampling, DoesNotDependOnWhatElseIsCounted) {
+  TrialModel trials(bright_chain(1));
+  const Counts both = sampled(trials, {Basis::rectilinear, Basis::diagonal}, {10000, 0}, 7);
+  const Counts one = sampled(trials, {Basis::diagonal}, {10000, 0}, 7);
+  EXPECT_EQ(both.heralds, one.heralds);
+  EXPECT_EQ(both.ends.at(Basis::diagonal), one.ends.at(Basis::diagonal));
+}
+
 TEST(SamplingToError, StopsAtOnePercent) {
   EXPECT_EQ(heralds_for(0.01), 10000U);
   TrialModel trials(bright_chain(1));

@@ -130,6 +130,21 @@ TEST(LeadingOrder, CountsAllTermsOfTheSameOrder) {
 TEST(LeadingOrder, IsOnlyDarkCountsWhereThereAreAny) {
   const Case one = case_of(test::alike_chain(1, "1/5", "1/1", "1/1", "1/10"));
   expect_encloses(enclosure_by("leading-order", one, "herald_probability"), Rational(2 * 81) / 10000);
+  const auto visibility = enclosure_by("leading-order", one, "visibility");  // no angle matters to a dark count
+  EXPECT_LE(visibility.lower, 0);
+  EXPECT_GE(visibility.upper, 0);
+  EXPECT_LE(Rational(visibility.upper - visibility.lower), Rational(1, 1000000000));
+}
+
+// A ratio of two terms of the same order does not depend on lam, and is the exact one in the limit.
+TEST(LeadingOrder, GivesTheVisibilityOfVanishingPairParameters) {
+  const Case one = case_of(test::alike_chain(1, "1/5", "1/2", "1/2", "0/1"));
+  const Case weak = case_of(test::alike_chain(1, "1/1000000", "1/2", "1/2", "0/1"));
+  const auto strong_visibility = enclosure_by("leading-order", one, "visibility");
+  const auto weak_visibility = enclosure_by("leading-order", weak, "visibility");
+  EXPECT_LE(strong_visibility.lower, weak_visibility.upper);
+  EXPECT_GE(strong_visibility.upper, weak_visibility.lower);
+  EXPECT_TRUE(error_of("leading-order", weak, "visibility").certainly_within(Rational(1, 100000)));
 }
 
 }  // namespace
