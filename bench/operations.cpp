@@ -1,45 +1,13 @@
 #include "bench/operations.hpp"
 
-#include <algorithm>
 #include <stdexcept>
 #include <variant>
 
+#include "fast/operation_count.hpp"
 #include "fast/planner.hpp"
 
 namespace heraldgauge::bench {
 namespace {
-
-// Numbers (a, b) with a + b <= cutoff.
-double triangle(int cutoff) { return (cutoff + 1) * (cutoff + 2) / 2.0; }
-
-// E_H^T X E_V with both sides cut on a + b: first over a for every b, then over b for every new a.
-double product(int in, int out) { return (out + 1) * triangle(in) + (in + 1) * triangle(out); }
-
-double transfer(const fast::Plan& plan) {
-  double count = 0;
-  for (const fast::EndView& view : plan.left) {
-    const int deltas = view.sectors ? plan.deltas() : 0;
-    for (std::size_t k = 0; k < plan.stations.size(); ++k) {
-      const auto products = static_cast<double>(plan.stations[k].terms.size() * (plan.parity ? 2 : 1));
-      for (int delta = 0; delta <= deltas; ++delta) {
-        count += products * product(plan.cutoffs[k] - delta, plan.cutoffs[k + 1] - delta);
-      }
-    }
-  }
-  return count;
-}
-
-double contraction(const fast::Plan& plan) {
-  double count = 0;
-  for (const fast::Pairing& pairing : plan.pairings) {
-    const bool sectors = plan.left[static_cast<std::size_t>(pairing.left)].sectors &&
-                         plan.right[static_cast<std::size_t>(pairing.right)].sectors;
-    for (int delta = 0; delta <= (sectors ? plan.deltas() : 0); ++delta) {
-      count += triangle(plan.cutoffs.back() - delta) * (plan.parity ? 2 : 1);
-    }
-  }
-  return count;
-}
 
 constexpr int accumulators = 12;  // enough to hide the latency of both operations, and no more than fit in registers
 
@@ -76,7 +44,7 @@ double multiply_adds(const model::Chain& chain, const std::vector<model::Quantit
   const auto cutoffs = fast::first_cutoffs(served, modes);
   if (!cutoffs) throw std::runtime_error("more pairs a source than the fast evaluator keeps");
   const fast::Plan plan = fast::make_plan(served, modes, fast::needs_of(quantities), *cutoffs).plan;
-  return transfer(plan) + contraction(plan);
+  return fast::multiply_adds(plan);
 }
 
 double multiply_adds_at_peak(long steps, double& sink) {

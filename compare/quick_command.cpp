@@ -2,6 +2,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <span>
 
 #include "compare/points.hpp"
 #include "fast/evaluate.hpp"
@@ -42,7 +43,7 @@ reports::QuickResult record_of(const fast::Value& value) {
   return record;
 }
 
-void append(QuickAnswer& answer, const reports::Parameters& parameters, const std::vector<fast::Value>& values) {
+void append(QuickAnswer& answer, const reports::Parameters& parameters, std::span<const fast::Value> values) {
   reports::QuickPoint& point = answer.report.points.emplace_back();
   point.parameters = parameters;
   for (const fast::Value& value : values) {
@@ -57,13 +58,17 @@ model::Expected<QuickAnswer> quick_command(const model::Scenario& scenario, cons
   const std::vector<model::Quantity> quantities = quantities_to_give(options.quantities, scenario, false);
   QuickAnswer answer;
   answer.report.title = scenario.title;
+  std::vector<fast::Value> values;
   const std::uint64_t count = scenario.point_count();
   for (std::uint64_t first = 0; first < count; first += block_size) {
     const std::size_t size = std::min(block_size, count - first);
     const auto chains = chains_at(scenario, first, size, options.threads);
     if (!chains) return chains.faults();
-    const auto values = fast::evaluate_all(*chains, quantities, scenario.pattern, options.threads);
-    for (std::size_t i = 0; i < size; ++i) append(answer, parameters_at(scenario, first + i), values[i]);
+    fast::evaluate_all(*chains, quantities, scenario.pattern, options.threads, values);
+    for (std::size_t i = 0; i < size; ++i) {
+      append(answer, parameters_at(scenario, first + i),
+             std::span(values).subspan(i * quantities.size(), quantities.size()));
+    }
   }
   return answer;
 }

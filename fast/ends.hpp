@@ -5,8 +5,10 @@
 #include <array>
 #include <vector>
 
+#include "fast/dot.hpp"
 #include "fast/precision.hpp"
 #include "fast/rotation.hpp"
+#include "fast/sectors.hpp"
 
 namespace heraldgauge::fast {
 
@@ -30,29 +32,37 @@ struct EndMode {
 // Click and no-click probabilities of one detector for 0..largest photons; no subtraction.
 template <class T>
 struct ClickTable {
-  std::vector<T> silent;  // (1-d) s^p
-  std::vector<T> click;   // d + (1-d)(1-s^p)
-  std::vector<T> caught;  // 1 - s^p
-  T dark, live;           // d, 1-d
+  Buffer<T> silent;  // (1-d) s^p
+  Buffer<T> click;   // d + (1-d)(1-s^p)
+  Buffer<T> caught;  // 1 - s^p
+  T dark, live;      // d, 1-d
+
+  ClickTable(const EndMode<T>& end, std::size_t detector, int largest)
+      : dark(end.dark[detector]), live(end.live[detector]) {
+    const auto size = static_cast<std::size_t>(largest) + 1;
+    for (Buffer<T>* table : {&silent, &click, &caught}) table->reserve(size);
+    T passed(1.0);  // s^p
+    T some(0.0);    // 1 - s^p
+    for (int p = 0; p <= largest; ++p) {
+      silent.push_back(live * passed);
+      click.push_back(dark + live * some);
+      caught.push_back(some);
+      some = some + passed * end.registering[detector];
+      passed = passed * end.missing[detector];
+    }
+  }
+};
+
+// Both detectors of an end.
+template <class T>
+struct EndTables {
+  ClickTable<T> plus, cross;
+  EndTables(const EndMode<T>& end, int largest) : plus(end, 0, largest), cross(end, 1, largest) {}
 };
 
 template <class T>
-ClickTable<T> click_table(const EndMode<T>& end, std::size_t detector, int largest) {
-  ClickTable<T> table{{}, {}, {}, end.dark[detector], end.live[detector]};
-  T passed(1.0);  // s^p
-  T caught(0.0);  // 1 - s^p
-  for (int p = 0; p <= largest; ++p) {
-    table.silent.push_back(end.live[detector] * passed);
-    table.click.push_back(end.dark[detector] + end.live[detector] * caught);
-    table.caught.push_back(caught);
-    caught = caught + passed * end.registering[detector];
-    passed = passed * end.missing[detector];
-  }
-  return table;
-}
-
-template <class T>
-T outcome_weight(const ClickTable<T>& plus, const ClickTable<T>& cross, int outcome, int p, int q) {
+T outcome_weight(const EndTables<T>& end, int outcome, int p, int q) {
+  const auto& [plus, cross] = end;
   const auto i = static_cast<std::size_t>(p);
   const auto j = static_cast<std::size_t>(q);
   const T half(0.5);
@@ -75,56 +85,26 @@ T outcome_weight(const ClickTable<T>& plus, const ClickTable<T>& cross, int outc
   }
 }
 
-// One value for each (Delta, a, b) with a + b + Delta <= cutoff and Delta <= deltas: rows a = 0..cutoff-Delta, each of
-// cutoff-Delta-a+1 entries b.
-template <class T>
-class Sectors {
- public:
-  Sectors() = default;
-  Sectors(int cutoff, int deltas) : cutoff_(cutoff), deltas_(deltas) {
-    std::size_t size = 0;
-    for (int delta = 0; delta <= deltas; ++delta) {
-      offset_.push_back(size);
-      size += static_cast<std::size_t>(cutoff - delta + 1) * static_cast<std::size_t>(cutoff - delta + 2) / 2;
-    }
-    data_.assign(size, T(0.0));
-  }
-  int cutoff() const { return cutoff_; }
-  int deltas() const { return deltas_; }
-  T* row(int delta, int a) { return data_.data() + position(delta, a); }
-  const T* row(int delta, int a) const { return data_.data() + position(delta, a); }
-  std::vector<T>& data() { return data_; }
-  const std::vector<T>& data() const { return data_; }
-
- private:
-  std::size_t position(int delta, int a) const {
-    const int width = cutoff_ - delta + 1;
-    return offset_[static_cast<std::size_t>(delta)] + static_cast<std::size_t>(a * width - a * (a - 1) / 2);
-  }
-  int cutoff_ = -1;
-  int deltas_ = -1;
-  std::vector<std::size_t> offset_;
-  std::vector<T> data_;
-};
-
 // The end's elements for one outcome and all sectors, normalised.
 template <class T>
-Sectors<T> end_elements(const EndMode<T>& end, const Rotation& rotation, int outcome, int cutoff, int deltas) {
-  const ClickTable<T> plus = click_table(end, 0, cutoff);
-  const ClickTable<T> cross = click_table(end, 1, cutoff);
+Sectors<T> end_elements(const EndTables<T>& end, const Rotation& rotation, int outcome, int cutoff, int deltas) {
   Sectors<T> elements(cutoff, deltas);
-  std::vector<T> weight(static_cast<std::size_t>(cutoff) + 1);
+  Buffer<T> weight(static_cast<std::size_t>(cutoff) + 1);
   for (int n = 0; n <= cutoff; ++n) {
     for (int p = 0; p <= n; ++p) {
-      weight[static_cast<std::size_t>(p)] = outcome_weight(plus, cross, outcome, p, n - p);
+      weight[static_cast<std::size_t>(p)] = outcome_weight(end, outcome, p, n - p);
     }
     for (int delta = 0; delta <= deltas && delta <= n; ++delta) {
       for (int a = 0; a <= n - delta; ++a) {
         const auto* upper = rotation.row(Table<T>{}, n, a + delta);
         const auto* lower = rotation.row(Table<T>{}, n, a);
-        T sum(0.0);
-        for (int p = 0; p <= n; ++p) sum += weight[static_cast<std::size_t>(p)] * T(upper[p] * lower[p]);
-        elements.row(delta, a)[n - delta - a] = sum;
+        const int b = n - delta - a;
+        if (rotation.balanced() && a > b) {  // exchanging H and V only reverses cross
+          elements.row(delta, a)[b] = elements.row(delta, b)[a];
+          continue;
+        }
+        elements.row(delta, a)[b] = interleaved_sum<T>(
+            n + 1, [&](int p) { return weight[static_cast<std::size_t>(p)] * T(upper[p] * lower[p]); });
       }
     }
   }
@@ -133,14 +113,12 @@ Sectors<T> end_elements(const EndMode<T>& end, const Rotation& rotation, int out
 
 // Ends at 0 or 90 degrees see photon numbers as they are: only sector 0, no sum.
 template <class T>
-Sectors<T> aligned_end_elements(const EndMode<T>& end, const Rotation& rotation, int outcome, int cutoff) {
-  const ClickTable<T> plus = click_table(end, 0, cutoff);
-  const ClickTable<T> cross = click_table(end, 1, cutoff);
+Sectors<T> aligned_end_elements(const EndTables<T>& end, const Rotation& rotation, int outcome, int cutoff) {
   const bool exchanged = rough(rotation.row(Table<T>{}, 1, 1)[1]) == 0;
   Sectors<T> elements(cutoff, 0);
   for (int a = 0; a <= cutoff; ++a) {
     for (int b = 0; b <= cutoff - a; ++b) {
-      elements.row(0, a)[b] = outcome_weight(plus, cross, outcome, exchanged ? b : a, exchanged ? a : b);
+      elements.row(0, a)[b] = outcome_weight(end, outcome, exchanged ? b : a, exchanged ? a : b);
     }
   }
   return elements;

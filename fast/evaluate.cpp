@@ -5,6 +5,7 @@
 
 #include <algorithm>
 
+#include "fast/capacity.hpp"
 #include "fast/quantities.hpp"
 
 namespace heraldgauge::fast {
@@ -13,10 +14,13 @@ namespace {
 using model::Quantity;
 using model::QuantityKind;
 
-constexpr double tail_allowed = 5e-14;
-// A point whose bound is beyond this is done again in double-double; long chains may take more round-off.
+constexpr double tail_allowed = 2e-13;
+// A value whose bound is beyond this is done again in double-double; long chains may take more round-off. The bounds
+// count every rounding at its worst: true errors are some hundred times smaller.
 constexpr std::size_t short_chain = 20;
-constexpr double bound_allowed(std::size_t stations) { return stations <= short_chain ? 9e-13 : 9e-11; }
+constexpr double bound_allowed(std::size_t stations) { return stations <= short_chain ? 1e-11 : 9e-11; }
+// Beyond this even then, a value is not given.
+constexpr double bound_served = 1e-9;
 constexpr int most_attempts = 8;
 
 // A point with everything that does not change between attempts.
@@ -70,58 +74,77 @@ double unit_of(const Point& point) {
 }
 
 template <class T>
-Formed attempt(const Point& point, const Planned& planned, const std::vector<Quantity>& quantities) {
+Accuracy attempt(const Point& point, const Planned& planned, const std::vector<Quantity>& quantities,
+                 std::span<Value> values) {
   const LinkModes<T> modes = rounded_modes<T>({&point.modes.modes});
   const KernelResult<T> result = run_kernel(planned.plan, modes);
-  return form_values(*point.chain, sums_of(result, planned, modes.right, unit_of<T>(point)), quantities);
+  return form_values(*point.chain, sums_of(result, planned, modes.right, unit_of<T>(point)), quantities, values);
 }
 
-// Takes more pairs, or double-double, until the bounds are met or nothing more can be done.
-Formed improve(Formed formed, Point& point, const Needs& needs, const std::vector<Quantity>& quantities) {
-  bool precise = false;
-  for (int i = 0; i < most_attempts; ++i) {
-    const bool short_tail = formed.tail_share > tail_allowed;
-    if (!short_tail && (formed.worst_bound <= bound_allowed(point.numbers.stations.size()) || precise)) break;
-    if (short_tail) {
-      const auto cutoffs = more_pairs(point.cutoffs, point.numbers);
-      if (!cutoffs) break;
-      point.cutoffs = *cutoffs;
-    } else {
-      precise = true;
-    }
-    const Planned planned = make_plan(point.numbers, point.modes, needs, point.cutoffs);
-    formed = precise ? attempt<DoubleDouble>(point, planned, quantities) : attempt<double>(point, planned, quantities);
+// The values by T, again with more pairs as long as the cut-offs leave out too much.
+template <class T>
+void evaluate_with_more_pairs(Accuracy accuracy, Point& point, const std::vector<Quantity>& quantities,
+                              std::span<Value> values) {
+  const Needs needs = needs_of(quantities);
+  for (int i = 0; i < most_attempts && accuracy.tail_share > tail_allowed; ++i) {
+    const auto cutoffs = more_pairs(point.cutoffs, point.numbers);
+    if (!cutoffs) break;
+    point.cutoffs = *cutoffs;
+    accuracy = attempt<T>(point, make_plan(point.numbers, point.modes, needs, point.cutoffs), quantities, values);
   }
-  for (Value& value : formed.values) {
-    if (value.status != Status::computed || value.relative_error_bound < 0.1) continue;
+}
+
+// In double-double, those alone whose bound asks for it.
+void evaluate_precisely(Point& point, const std::vector<Quantity>& quantities, std::span<Value> values) {
+  const double allowed = bound_allowed(point.numbers.stations.size());
+  std::vector<std::size_t> where;
+  std::vector<Quantity> again;
+  for (std::size_t i = 0; i < values.size(); ++i) {
+    if (values[i].relative_error_bound <= allowed) continue;
+    where.push_back(i);
+    again.push_back(quantities[i]);
+  }
+  if (again.empty()) return;
+  std::vector<Value> better(again.size());
+  const Planned planned = make_plan(point.numbers, point.modes, needs_of(again), point.cutoffs);
+  evaluate_with_more_pairs<DoubleDouble>(attempt<DoubleDouble>(point, planned, again, better), point, again, better);
+  for (std::size_t i = 0; i < where.size(); ++i) values[where[i]] = better[i];
+}
+
+// Takes more pairs, then double-double, until the bounds are met or nothing more can be done.
+void improve(const Accuracy& accuracy, Point& point, const std::vector<Quantity>& quantities, std::span<Value> values) {
+  evaluate_with_more_pairs<double>(accuracy, point, quantities, values);
+  evaluate_precisely(point, quantities, values);
+  for (Value& value : values) {
+    if (value.status != Status::computed || value.relative_error_bound < bound_served) continue;
     value = {value.quantity, Status::declined, "its terms cancel below the precision of double-double", {}, 0};
   }
-  return formed;
 }
 
-std::vector<Value> declined(const model::Chain& chain, const std::vector<Quantity>& quantities,
-                            const std::string& reason) {
-  std::vector<Value> values;
-  for (const Quantity& quantity : quantities) {
-    values.push_back(is_capacity(quantity.kind) ? capacity(chain, quantity)
-                                                : Value{quantity, Status::declined, reason, {}, 0});
+void decline(const model::Chain& chain, const std::vector<Quantity>& quantities, const std::string& reason,
+             std::span<Value> values) {
+  const Bottlenecks bottlenecks = bottlenecks_of(chain);
+  for (std::size_t i = 0; i < quantities.size(); ++i) {
+    values[i] = is_capacity(quantities[i].kind) ? capacity(bottlenecks, quantities[i])
+                                                : Value{quantities[i], Status::declined, reason, {}, 0};
   }
-  return values;
 }
 
-// The points of one block: those whose plans are equal go through the kernel four at a time, and every lane's bytes are
-// those of the point alone.
+// The points of one block: those whose plans are equal go through the kernel a batch of lanes at a time, and every
+// lane's bytes are those of the point alone.
 class Block {
  public:
-  Block(std::span<const model::Chain> chains, const std::vector<Quantity>& quantities, std::vector<Value>* answers)
+  // answers: one value a quantity, chain by chain.
+  Block(std::span<const model::Chain> chains, const std::vector<Quantity>& quantities, std::span<Value> answers)
       : quantities_(quantities), needs_(needs_of(quantities)), answers_(answers) {
+    points_.reserve(chains.size());
     for (const model::Chain& chain : chains) points_.push_back(prepare(chain));
   }
 
   void run() {
     for (std::size_t i = 0; i < points_.size(); ++i) {
       if (!points_[i].refusal.empty()) {
-        answers_[i] = declined(*points_[i].chain, quantities_, points_[i].refusal);
+        decline(*points_[i].chain, quantities_, points_[i].refusal, values_of(i));
         continue;
       }
       enter(i);
@@ -152,32 +175,38 @@ class Block {
     std::size_t i = 0;
     for (; i + lanes <= group.members.size(); i += lanes) run_lanes(group, i);
     for (; i < group.members.size(); ++i) {
-      finish(group.members[i], attempt<double>(points_[group.members[i]], group.planned, quantities_));
+      const std::size_t index = group.members[i];
+      improve_further(index, attempt<double>(points_[index], group.planned, quantities_, values_of(index)));
     }
   }
 
   void run_lanes(const Group& group, std::size_t first) {
     std::vector<const LinkModes<DoubleDouble>*> modes;
     for (std::size_t i = 0; i < lanes; ++i) modes.push_back(&points_[group.members[first + i]].modes.modes);
-    const KernelResult<Lanes<4>> results = run_kernel(group.planned.plan, rounded_modes<Lanes<4>>(modes));
+    const KernelResult<Lanes<batch_width>> results =
+        run_kernel(group.planned.plan, rounded_modes<Lanes<batch_width>>(modes));
     for (std::size_t i = 0; i < lanes; ++i) {
       const std::size_t index = group.members[first + i];
-      const EndMode<double> right = rounded_modes<double>({modes[i]}).right;
+      const EndMode<double> right = rounded_end(modes[i]->right);
       const Sums sums =
           sums_of(lane_result(results, static_cast<int>(i)), group.planned, right, unit_of<double>(points_[index]));
-      finish(index, form_values(*points_[index].chain, sums, quantities_));
+      improve_further(index, form_values(*points_[index].chain, sums, quantities_, values_of(index)));
     }
   }
 
-  void finish(std::size_t index, Formed formed) {
-    answers_[index] = improve(std::move(formed), points_[index], needs_, quantities_).values;
+  void improve_further(std::size_t index, const Accuracy& accuracy) {
+    improve(accuracy, points_[index], quantities_, values_of(index));
   }
 
-  static constexpr std::size_t lanes = 4;
+  std::span<Value> values_of(std::size_t index) const {
+    return answers_.subspan(index * quantities_.size(), quantities_.size());
+  }
+
+  static constexpr std::size_t lanes = batch_width;
   const std::vector<Quantity>& quantities_;
   Needs needs_;
-  std::vector<Value>* answers_;
-  std::vector<Point> points_;
+  std::span<Value> answers_;
+  Buffer<Point> points_;
   std::vector<Group> groups_;
 };
 
@@ -187,24 +216,24 @@ constexpr std::size_t block_size = 64;
 
 std::vector<Value> evaluate(const model::Chain& chain, const std::vector<Quantity>& quantities,
                             const std::optional<model::Pattern>&) {
-  std::vector<Value> answer;
-  Block(std::span(&chain, 1), quantities, &answer).run();
+  std::vector<Value> answer(quantities.size());
+  Block(std::span(&chain, 1), quantities, answer).run();
   return answer;
 }
 
-std::vector<std::vector<Value>> evaluate_all(std::span<const model::Chain> chains,
-                                             const std::vector<Quantity>& quantities,
-                                             const std::optional<model::Pattern>&, unsigned threads) {
-  std::vector<std::vector<Value>> answers(chains.size());
+void evaluate_all(std::span<const model::Chain> chains, const std::vector<Quantity>& quantities,
+                  const std::optional<model::Pattern>&, unsigned threads, std::vector<Value>& answers) {
+  answers.resize(chains.size() * quantities.size());
   const std::size_t blocks = (chains.size() + block_size - 1) / block_size;
   const auto run_block = [&](std::size_t block) {
     const std::size_t first = block * block_size;
     const std::size_t count = std::min(block_size, chains.size() - first);
-    Block(chains.subspan(first, count), quantities, answers.data() + first).run();
+    Block(chains.subspan(first, count), quantities,
+          std::span(answers).subspan(first * quantities.size(), count * quantities.size()))
+        .run();
   };
   tbb::task_arena arena(threads == 0 ? tbb::task_arena::automatic : static_cast<int>(threads));
   arena.execute([&] { tbb::parallel_for(std::size_t{0}, blocks, run_block); });
-  return answers;
 }
 
 }  // namespace heraldgauge::fast

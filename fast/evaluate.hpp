@@ -40,11 +40,10 @@ struct Value {
 std::vector<Value> evaluate(const model::Chain& chain, const std::vector<model::Quantity>& quantities,
                             const std::optional<model::Pattern>& pattern = std::nullopt);
 
-// The same for many chains, on `threads` threads (0: as many as the machine has). The answer does not depend on
-// `threads`.
-std::vector<std::vector<Value>> evaluate_all(std::span<const model::Chain> chains,
-                                             const std::vector<model::Quantity>& quantities,
-                                             const std::optional<model::Pattern>& pattern, unsigned threads);
+// The same for many chains, on `threads` threads (0: as many as the machine has). `answers` becomes the values chain by
+// chain, one a quantity; whoever calls it again and again keeps its memory. They do not depend on `threads`.
+void evaluate_all(std::span<const model::Chain> chains, const std::vector<model::Quantity>& quantities,
+                  const std::optional<model::Pattern>& pattern, unsigned threads, std::vector<Value>& answers);
 
 // 17 significant digits in scientific notation, correctly rounded; exponents beyond binary64 are fine.
 std::string decimal(const Scaled& value);

@@ -15,19 +15,34 @@ KernelResult<T> run_kernel(const Plan& plan, const LinkModes<T>& modes) {
 
 namespace {
 
-// The same operations with four doubles a register; no fused operation, so the same bytes. Everything is inlined here,
-// so that no function compiled for these registers can be called from elsewhere.
-__attribute__((target("avx2"), flatten)) KernelResult<Lanes<4>> run_wide(const Plan& plan,
-                                                                         const LinkModes<Lanes<4>>& modes) {
-  return Kernel<Lanes<4>>(plan, modes).run();
+using Batch = Lanes<batch_width>;
+
+// The same operations in wider registers; no fused operation, so the same bytes. Everything is inlined here, so that no
+// function compiled for these registers can be called from elsewhere.
+__attribute__((target("avx2"), flatten)) KernelResult<Batch> run_in_256_bits(const Plan& plan,
+                                                                             const LinkModes<Batch>& modes) {
+  return Kernel<Batch>(plan, modes).run();
+}
+__attribute__((target("avx512f,avx512dq,avx512vl"), flatten)) KernelResult<Batch> run_in_512_bits(
+    const Plan& plan, const LinkModes<Batch>& modes) {
+  return Kernel<Batch>(plan, modes).run();
+}
+
+using Run = KernelResult<Batch> (*)(const Plan&, const LinkModes<Batch>&);
+Run widest() {
+  const bool has_512 =
+      __builtin_cpu_supports("avx512f") && __builtin_cpu_supports("avx512dq") && __builtin_cpu_supports("avx512vl");
+  if (has_512) return run_in_512_bits;
+  if (__builtin_cpu_supports("avx2")) return run_in_256_bits;
+  return [](const Plan& plan, const LinkModes<Batch>& modes) { return Kernel<Batch>(plan, modes).run(); };
 }
 
 }  // namespace
 
 template <>
-KernelResult<Lanes<4>> run_kernel(const Plan& plan, const LinkModes<Lanes<4>>& modes) {
-  static const bool wide = __builtin_cpu_supports("avx2");
-  return wide ? run_wide(plan, modes) : Kernel<Lanes<4>>(plan, modes).run();
+KernelResult<Batch> run_kernel(const Plan& plan, const LinkModes<Batch>& modes) {
+  static const Run run = widest();
+  return run(plan, modes);
 }
 
 template KernelResult<double> run_kernel(const Plan&, const LinkModes<double>&);

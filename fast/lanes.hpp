@@ -7,9 +7,10 @@ namespace heraldgauge::fast {
 template <int Width>
 struct VectorOf;
 template <>
-struct VectorOf<4> {
-  typedef double Type __attribute__((vector_size(4 * sizeof(double))));
+struct VectorOf<8> {
+  typedef double Type __attribute__((vector_size(8 * sizeof(double))));
 };
+inline constexpr int batch_width = 8;
 
 template <int Width>
 struct alignas(Width * sizeof(double)) Lanes {  // else 16 bytes where the compiler may not use wide registers

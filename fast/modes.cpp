@@ -66,6 +66,10 @@ bool same(const StationNumbers& a, const StationNumbers& b) {
          a.right_transmittance == b.right_transmittance && a.overlap == b.overlap;
 }
 
+bool polarisations_alike(const StationNumbers& station) {
+  return same(station.detectors[0], station.detectors[1]) && same(station.detectors[2], station.detectors[3]);
+}
+
 StationStructure structure_of(const StationNumbers& station) {
   StationStructure structure{};
   for (std::size_t p = 0; p < 2; ++p) {
@@ -74,8 +78,7 @@ StationStructure structure_of(const StationNumbers& station) {
     structure.overlap[p] = {overlap_of(c, d), overlap_of(d, c)};
     structure.alike[p] = same(c, d);
   }
-  structure.polarisations_alike =
-      same(station.detectors[0], station.detectors[1]) && same(station.detectors[2], station.detectors[3]);
+  structure.polarisations_alike = polarisations_alike(station);
   return structure;
 }
 
@@ -86,7 +89,12 @@ StationMode<DD> station_mode(const StationNumbers& station, Builder& build) {
   for (std::size_t p = 0; p < 2; ++p) {
     const DetectorNumbers& c = station.detectors[p];
     const DetectorNumbers& d = station.detectors[p + 2];
-    mode.click[p] = {build.click_mode(station, c, d), build.click_mode(station, d, c)};
+    if (p == 1 && polarisations_alike(station)) {
+      mode.click[1] = mode.click[0];
+    } else {
+      const ClickMode<DD> c_clicks = build.click_mode(station, c, d);
+      mode.click[p] = {c_clicks, same(c, d) ? c_clicks : build.click_mode(station, d, c)};
+    }
     registering = std::max({registering, c.registering.hi, d.registering.hi});
     dark = std::max({dark, c.dark.hi, d.dark.hi});
   }
@@ -154,6 +162,10 @@ void put(StationMode<T>& to, int lane, const StationMode<DD>& from) {
 ExactModes modes_of(const ChainNumbers& numbers) {
   ExactModes result;
   Builder build(result.smallest_complement);
+  result.modes.parameter.reserve(numbers.sources.size());
+  result.modes.vacuum.reserve(numbers.sources.size());
+  result.modes.stations.reserve(numbers.stations.size());
+  result.structure.reserve(numbers.stations.size());
   for (const SourceNumbers& source : numbers.sources) {
     result.modes.parameter.push_back(source.parameter);
     result.modes.vacuum.push_back(source.vacuum);
@@ -171,6 +183,12 @@ ExactModes modes_of(const ChainNumbers& numbers) {
   }
   result.modes.left = end_mode(numbers.left);
   result.modes.right = end_mode(numbers.right);
+  return result;
+}
+
+EndMode<double> rounded_end(const EndMode<DD>& end) {
+  EndMode<double> result;
+  put(result, 0, end);
   return result;
 }
 
@@ -196,6 +214,6 @@ LinkModes<T> rounded_modes(const std::vector<const LinkModes<DD>*>& modes) {
 
 template LinkModes<double> rounded_modes(const std::vector<const LinkModes<DD>*>&);
 template LinkModes<DD> rounded_modes(const std::vector<const LinkModes<DD>*>&);
-template LinkModes<Lanes<4>> rounded_modes(const std::vector<const LinkModes<DD>*>&);
+template LinkModes<Lanes<batch_width>> rounded_modes(const std::vector<const LinkModes<DD>*>&);
 
 }  // namespace heraldgauge::fast

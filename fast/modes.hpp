@@ -19,11 +19,13 @@ struct StationStructure {
 
 struct ExactModes {
   LinkModes<DoubleDouble> modes;
-  std::vector<StationStructure> structure;
+  Buffer<StationStructure> structure;
   double smallest_complement = 1;  // the smallest 1 - x that is not zero
 };
 
 ExactModes modes_of(const ChainNumbers& numbers);
+
+EndMode<double> rounded_end(const EndMode<DoubleDouble>& end);
 
 // modes[i] goes to lane i.
 template <class T>

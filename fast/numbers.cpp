@@ -22,7 +22,9 @@ DoubleDouble scaled(const Integer& value, long exponent) {
   return quick_two_sum(high, std::ldexp(low, static_cast<int>(exponent)));
 }
 
-bool fits(const Integer& x) { return mpz_sizeinbase(x.get_mpz_t(), 2) <= 53; }
+std::size_t bits(const Integer& x) { return mpz_sizeinbase(x.get_mpz_t(), 2); }
+bool fits(const Integer& x) { return bits(x) <= 53; }
+bool is_power_of_two(const Integer& x) { return mpz_scan1(x.get_mpz_t(), 0) + 1 == bits(x); }
 
 // Real::evaluate in double-double.
 struct Engine {
@@ -44,20 +46,24 @@ struct Engine {
   Number square_root(const Number& x) const { return fast::square_root(x); }
 };
 
-// Remembers the last few numbers converted: in most chains nearly all are alike.
+enum class Key { pair_parameter, transmittance, efficiency, dark_probability, indistinguishability };
+constexpr std::size_t key_count = 5;
+constexpr std::array<const char*, key_count> key_names = {"source.pair_parameter", "channel.transmittance",
+                                                          "detector.efficiency", "detector.dark_probability",
+                                                          "station.indistinguishability"};
+
+// Remembers the last number converted for each key: in most chains nearly all are alike.
 class Reader {
  public:
-  DoubleDouble operator()(const Real& x, const char* key) {
-    for (std::size_t i = 0; i < used_; ++i) {
-      if (*known_[i].first == x) return known_[i].second;
+  DoubleDouble operator()(const Real& x, Key key) {
+    auto& [last, value] = known_[static_cast<std::size_t>(key)];
+    if (last != nullptr && *last == x) return value;
+    last = &x;
+    value = rounded(x);
+    if (!x.is_zero() && value.hi < smallest_input) {
+      refuse(std::string(key_names[static_cast<std::size_t>(key)]) +
+             " is below 1e-30 and not zero, which binary64 products would lose");
     }
-    const DoubleDouble value = rounded(x);
-    if (!x.is_zero() && value.hi < smallest_input && fault_.empty()) {
-      fault_ = std::string(key) + " is below 1e-30 and not zero, which binary64 products would lose";
-    }
-    known_[next_] = {&x, value};
-    next_ = (next_ + 1) % known_.size();
-    if (used_ < known_.size()) ++used_;
     return value;
   }
   // 1 - x for x in [0, 1], which a product of roundings may not determine when it is tiny.
@@ -72,17 +78,15 @@ class Reader {
   const std::string& fault() const { return fault_; }
 
  private:
-  std::array<std::pair<const Real*, DoubleDouble>, 8> known_;
-  std::size_t used_ = 0;
-  std::size_t next_ = 0;
+  std::array<std::pair<const Real*, DoubleDouble>, key_count> known_{};
   std::string fault_;
 };
 
-DetectorNumbers detector_numbers(const model::Detector& detector, const std::string& place, Reader& read) {
-  if (detector.kind == model::DetectorKind::resolving) read.refuse(place + ".detector.kind is resolving");
+DetectorNumbers detector_numbers(const model::Detector& detector, const char* place, Reader& read) {
+  if (detector.kind == model::DetectorKind::resolving) read.refuse(std::string(place) + ".detector.kind is resolving");
   DetectorNumbers numbers;
-  numbers.registering = read(detector.efficiency, "detector.efficiency");
-  numbers.dark = read(detector.dark_probability, "detector.dark_probability");
+  numbers.registering = read(detector.efficiency, Key::efficiency);
+  numbers.dark = read(detector.dark_probability, Key::dark_probability);
   numbers.live = read.complement(numbers.dark, "detector.dark_probability");
   if (detector.dark_model == model::DarkModel::thermal) numbers.registering = numbers.registering * numbers.live;
   return numbers;
@@ -91,7 +95,7 @@ DetectorNumbers detector_numbers(const model::Detector& detector, const std::str
 EndNumbers end_numbers(const model::End& end, const model::Arm& arm, Reader& read) {
   if (!end.background.photons.is_zero()) read.refuse("end.background_photons is not zero");
   EndNumbers numbers;
-  const DoubleDouble transmittance = read(arm.transmittance, "channel.transmittance");
+  const DoubleDouble transmittance = read(arm.transmittance, Key::transmittance);
   for (std::size_t i = 0; i < 2; ++i) {
     numbers.detectors[i] = detector_numbers(end.detectors[i], "end", read);
     numbers.detectors[i].registering = numbers.detectors[i].registering * transmittance;
@@ -105,9 +109,9 @@ StationNumbers station_numbers(const model::Station& station, const model::Arm& 
   if (!station.background.photons.is_zero()) read.refuse("station.background_photons is not zero");
   StationNumbers numbers;
   numbers.herald = station.herald;
-  numbers.left_transmittance = read(r.transmittance, "channel.transmittance");
-  numbers.right_transmittance = read(l.transmittance, "channel.transmittance");
-  const DoubleDouble v = read(station.indistinguishability, "station.indistinguishability");
+  numbers.left_transmittance = read(r.transmittance, Key::transmittance);
+  numbers.right_transmittance = read(l.transmittance, Key::transmittance);
+  const DoubleDouble v = read(station.indistinguishability, Key::indistinguishability);
   const DoubleDouble product = numbers.left_transmittance * numbers.right_transmittance;
   numbers.overlap = numbers.left_transmittance == numbers.right_transmittance
                         ? numbers.left_transmittance * (v == DoubleDouble(1) ? v : square_root(v))
@@ -119,7 +123,7 @@ StationNumbers station_numbers(const model::Station& station, const model::Arm& 
 SourceNumbers source_numbers(const model::Source& source, Reader& read) {
   SourceNumbers numbers;
   numbers.squeezed = source.kind == model::SourceKind::squeezed;
-  numbers.parameter = read(source.pair_parameter, "source.pair_parameter");
+  numbers.parameter = read(source.pair_parameter, Key::pair_parameter);
   const DoubleDouble rest = read.complement(numbers.parameter, "source.pair_parameter");
   numbers.vacuum = numbers.squeezed ? rest * rest : rest;
   return numbers;
@@ -143,11 +147,13 @@ CosineSine octant(const Rational& degrees) {
 }  // namespace
 
 DoubleDouble rounded(const Rational& x) {
+  if (fits(x.get_num()) && is_power_of_two(x.get_den())) {
+    return std::ldexp(x.get_num().get_d(), 1 - static_cast<int>(bits(x.get_den())));
+  }
   if (fits(x.get_num()) && fits(x.get_den())) {
     return DoubleDouble(x.get_num().get_d()) / DoubleDouble(x.get_den().get_d());
   }
-  const long shift = kept_bits - static_cast<long>(mpz_sizeinbase(x.get_num_mpz_t(), 2)) +
-                     static_cast<long>(mpz_sizeinbase(x.get_den_mpz_t(), 2));
+  const long shift = kept_bits - static_cast<long>(bits(x.get_num())) + static_cast<long>(bits(x.get_den()));
   Integer numerator = x.get_num();
   Integer denominator = x.get_den();
   if (shift >= 0) numerator <<= static_cast<unsigned long>(shift);
@@ -158,6 +164,7 @@ DoubleDouble rounded(const Rational& x) {
 DoubleDouble rounded(const Real& x) { return x.evaluate(Engine{}); }
 
 Rational reduced_angle(const Rational& degrees) {
+  if (degrees >= 0 && degrees < 180) return degrees;
   const Rational turns = degrees / 180;
   Integer whole;
   mpz_fdiv_q(whole.get_mpz_t(), turns.get_num_mpz_t(), turns.get_den_mpz_t());
@@ -181,6 +188,8 @@ CosineSine cosine_sine(const Rational& degrees) {
 std::variant<ChainNumbers, std::string> numbers_of(const model::Chain& chain) {
   Reader read;
   ChainNumbers numbers;
+  numbers.sources.reserve(chain.sources.size());
+  numbers.stations.reserve(chain.stations.size());
   for (const model::Source& source : chain.sources) numbers.sources.push_back(source_numbers(source, read));
   for (std::size_t k = 0; k < chain.stations.size(); ++k) {
     numbers.stations.push_back(station_numbers(chain.stations[k], chain.right_arms[k], chain.left_arms[k + 1], read));

@@ -5,9 +5,9 @@
 #include <array>
 #include <string>
 #include <variant>
-#include <vector>
 
 #include "fast/double_double.hpp"
+#include "fast/pool.hpp"
 #include "reference/model/chain.hpp"
 
 namespace heraldgauge::fast {
@@ -41,8 +41,8 @@ struct SourceNumbers {
 };
 
 struct ChainNumbers {
-  std::vector<SourceNumbers> sources;
-  std::vector<StationNumbers> stations;
+  Buffer<SourceNumbers> sources;
+  Buffer<StationNumbers> stations;
   EndNumbers left;
   EndNumbers right;
 };

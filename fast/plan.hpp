@@ -7,6 +7,7 @@
 
 #include "fast/ends.hpp"
 #include "fast/numbers.hpp"
+#include "fast/pool.hpp"
 #include "fast/station_elements.hpp"
 
 namespace heraldgauge::fast {
@@ -33,18 +34,29 @@ struct StationPlan {
 struct EndView {
   model::Rational angle;
   int outcome;
-  bool sectors;  // Delta > 0 is needed too
+  bool sectors;    // Delta > 0 is needed too
+  bool symmetric;  // on the left: exchanging a and b changes nothing, at any place of the chain
   friend bool operator==(const EndView&, const EndView&) = default;
 };
 
 struct Pairing {
   int left;   // index into Plan::left
   int right;  // index into Plan::right
-  // Recorded bits exchanged after an odd number of psi-: the right outcome used then, and its sectors change sign.
+  // Recorded bits exchanged after an odd number of psi-: the right outcome used then, and its sectors change sign; the
+  // same as `right` where the two outcomes are mirror images, which undoes the change of sign.
   int right_odd;
-  // The left outcome is the mirror image (V -> -V) of the view: sectors of odd Delta change sign.
+  // One outcome is the mirror image (V -> -V) of its view: sectors of odd Delta change sign.
   bool mirrored = false;
+  bool transposed = false;  // H and V exchanged in one of the two; sector 0 only
   friend bool operator==(const Pairing&, const Pairing&) = default;
+};
+
+// A left view that the herald contains, and how often: the outcomes at 0 degrees, each as it is or with H and V
+// exchanged.
+struct HeraldPart {
+  int view;
+  double times;
+  friend bool operator==(const HeraldPart&, const HeraldPart&) = default;
 };
 
 struct Plan {
@@ -54,8 +66,11 @@ struct Plan {
   std::vector<EndView> left;
   std::vector<EndView> right;
   std::vector<Pairing> pairings;
-  bool parity = false;  // carry even and odd numbers of psi- apart
-  bool odd = false;     // an odd number of psi- for certain
+  std::vector<HeraldPart> herald;
+  bool polarisations_alike = false;  // at every station
+  bool parity = false;               // carry even and odd numbers of psi- apart
+  bool odd = false;                  // an odd number of psi- for certain
+  int final_view = -1;               // the left view whose vector is asked for at the right end, if any
   friend bool operator==(const Plan&, const Plan&) = default;
 
   int deltas() const;  // the largest Delta that every cut-off allows
@@ -70,8 +85,8 @@ struct StationMode {
 
 template <class T>
 struct LinkModes {
-  std::vector<T> parameter, vacuum;  // sources
-  std::vector<StationMode<T>> stations;
+  Buffer<T> parameter, vacuum;  // sources
+  Buffer<StationMode<T>> stations;
   EndMode<T> left, right;
 };
 

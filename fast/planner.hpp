@@ -5,6 +5,7 @@
 #include <vector>
 
 #include "fast/modes.hpp"
+#include "fast/visibility.hpp"
 #include "reference/model/quantity.hpp"
 
 namespace heraldgauge::fast {
@@ -16,8 +17,9 @@ struct Layout {
   int diagonal = -1;     // 4 pairings: left bit * 2 + right bit
   int samples = -1;      // contrast at equally spaced right angles
   int sample_count = 0;
-  bool even_in_angle = false;  // samples cover phi = 0..pi only, both ends included
-  int visibility_left = -1;    // left view
+  bool even_in_angle = false;    // samples cover phi = 0..pi only, both ends included
+  int aligned_plus = -1;         // plus alone at right angles 0 and 90, where even
+  std::optional<Circle> circle;  // of the samples
 };
 
 // Both detectors of an end have the same numbers.
@@ -37,7 +39,7 @@ struct Planned {
 };
 Planned make_plan(const ChainNumbers& numbers, const ExactModes& modes, const Needs& needs, std::vector<int> cutoffs);
 
-// Pairs to keep per source so that the tail is likely below 2^-54 of every number; none where a source would need more
+// Pairs to keep per source so that the tail is likely below 5e-14 of every number; none where a source would need more
 // than largest_pairs. The kernel's bound decides whether it was enough.
 std::optional<std::vector<int>> first_cutoffs(const ChainNumbers& numbers, const ExactModes& modes);
 // A second guess after one that fell short.

@@ -2,7 +2,9 @@
 
 #include <algorithm>
 #include <cmath>
+#include <optional>
 
+#include "fast/capacity.hpp"
 #include "fast/numbers.hpp"
 
 namespace heraldgauge::fast {
@@ -33,7 +35,10 @@ class Former {
   }
 
   Value form(const Quantity& quantity) {
-    if (is_capacity(quantity.kind)) return capacity(chain_, quantity);
+    if (is_capacity(quantity.kind)) {
+      if (!bottlenecks_) bottlenecks_ = bottlenecks_of(chain_);
+      return capacity(*bottlenecks_, quantity);
+    }
     if (quantity.kind == QuantityKind::pattern_probability) {
       return {
           quantity, Status::declined, "pattern_probability of a free pattern is not served by this evaluator", {}, 0};
@@ -116,23 +121,27 @@ class Former {
     return ratio(wrong, wrong + sums_.diagonal[0] + sums_.diagonal[3]);
   }
 
-  // key_fraction and key_rate: the bound is relative to gain * sifting where that is the larger.
-  Value key(const Quantity& quantity) {
+  // What is left of a sifted bit: 1 - f h(e_rectilinear) - h(e_diagonal), where not negative.
+  Amount left_of_a_bit() const {
     const Amount first = binary_entropy(rectilinear_error());
     const Amount second = binary_entropy(diagonal_error());
-    const double sifting = rounded(chain_.protocol.sifting).hi;
     const double f = rounded(chain_.protocol.error_correction_factor).hi;
-    const double left = 1 - f * first.value - second.value;
-    const double error = f * first.error + second.error + 4 * half_ulp * (1 + f * first.value + second.value);
-    const double tail = f * first.tail + second.tail;
+    return {1 - f * first.value - second.value,
+            f * first.error + second.error + 4 * half_ulp * (1 + f * first.value + second.value),
+            f * first.tail + second.tail};
+  }
+
+  // key_fraction and key_rate: the bound is relative to gain * sifting where that is the larger.
+  Value key(const Quantity& quantity) {
+    if (!left_of_a_bit_) left_of_a_bit_ = left_of_a_bit();
+    const auto& [left, error, tail] = *left_of_a_bit_;
     note_tail(tail);
-    const Amount gain = given_herald(gain_);
-    const bool rate = quantity.kind == QuantityKind::key_rate && !chain_.stations.empty();
-    const Amount scale = rate ? gain_ : gain;
-    const long exponent = rate ? sums_.exponent : 0;
     Value result = exact(quantity, 0);
     if (left <= -(error + tail)) return result;
-    result.value = scaled(scale.value * sifting * std::max(left, 0.0), exponent);
+    const double sifting = rounded(chain_.protocol.sifting).hi;
+    const bool rate = quantity.kind == QuantityKind::key_rate && !chain_.stations.empty();
+    const Amount scale = rate ? gain_ : given_herald(gain_);
+    result.value = scaled(scale.value * sifting * std::max(left, 0.0), rate ? sums_.exponent : 0);
     result.relative_error_bound = (error + tail + std::fabs(left) * (scale.relative() + 4 * half_ulp)) * 1.001;
     return result;
   }
@@ -153,6 +162,8 @@ class Former {
   const model::Chain& chain_;
   const Sums& sums_;
   Amount gain_;
+  std::optional<Bottlenecks> bottlenecks_;
+  std::optional<Amount> left_of_a_bit_;
   double tail_share_ = 0;
 };
 
@@ -164,15 +175,16 @@ Scaled scaled(double x, long exponent) {
   return {significand, significand == 0 ? 0 : own + exponent};
 }
 
-Formed form_values(const model::Chain& chain, const Sums& sums, const std::vector<Quantity>& quantities) {
+Accuracy form_values(const model::Chain& chain, const Sums& sums, const std::vector<Quantity>& quantities,
+                     std::span<Value> values) {
   Former former(chain, sums);
-  Formed formed;
-  for (const Quantity& quantity : quantities) {
-    formed.values.push_back(former.form(quantity));
-    formed.worst_bound = std::max(formed.worst_bound, formed.values.back().relative_error_bound);
+  Accuracy accuracy;
+  for (std::size_t i = 0; i < quantities.size(); ++i) {
+    values[i] = former.form(quantities[i]);
+    accuracy.worst_bound = std::max(accuracy.worst_bound, values[i].relative_error_bound);
   }
-  formed.tail_share = former.tail_share();
-  return formed;
+  accuracy.tail_share = former.tail_share();
+  return accuracy;
 }
 
 }  // namespace heraldgauge::fast

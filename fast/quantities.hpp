@@ -1,6 +1,7 @@
 #pragma once
 // Quantities from probabilities.
 
+#include <span>
 #include <vector>
 
 #include "fast/evaluate.hpp"
@@ -8,18 +9,15 @@
 
 namespace heraldgauge::fast {
 
-// One value a quantity, in order; capacities come from the chain alone. `tail_share` is the largest part of any value
-// that its cut-offs may have left out, relative.
-struct Formed {
-  std::vector<Value> values;
-  double tail_share = 0;
-  double worst_bound = 0;
+// How well the values of a point are known.
+struct Accuracy {
+  double tail_share = 0;   // the largest part of any value that the cut-offs may have left out, relative
+  double worst_bound = 0;  // the largest relative error bound
 };
-Formed form_values(const model::Chain& chain, const Sums& sums, const std::vector<model::Quantity>& quantities);
 
-// A capacity of the loss alone, in bits per mode.
-Value capacity(const model::Chain& chain, const model::Quantity& quantity);
-bool is_capacity(model::QuantityKind kind);
+// Writes one value a quantity, in order; capacities come from the chain alone.
+Accuracy form_values(const model::Chain& chain, const Sums& sums, const std::vector<model::Quantity>& quantities,
+                     std::span<Value> values);
 
 // x * 2^exponent, normalised.
 Scaled scaled(double x, long exponent);

@@ -47,7 +47,7 @@ const Factors& factors() {
 }  // namespace
 
 Rotation::Rotation(const model::Rational& degrees, int largest)
-    : largest_(largest), aligned_(degrees == 0 || degrees == 90) {
+    : largest_(largest), aligned_(degrees == 0 || degrees == 90), balanced_(degrees == 45) {
   const CosineSine angle = cosine_sine(degrees);
   const DoubleDouble c = angle.cosine;
   const DoubleDouble s = angle.sine;

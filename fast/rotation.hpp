@@ -20,7 +20,8 @@ class Rotation {
   int largest() const { return largest_; }
   const double* row(double, int n, int h) const { return rounded_.data() + position(n, h); }
   const DoubleDouble* row(DoubleDouble, int n, int h) const { return exact_.data() + position(n, h); }
-  bool aligned() const { return aligned_; }  // at 0 or 90 degrees
+  bool aligned() const { return aligned_; }    // at 0 or 90 degrees
+  bool balanced() const { return balanced_; }  // at 45 degrees
 
  private:
   static std::size_t position(int n, int h) {
@@ -29,6 +30,7 @@ class Rotation {
   }
   int largest_;
   bool aligned_;
+  bool balanced_;
   std::vector<DoubleDouble> exact_;
   std::vector<double> rounded_;
 };

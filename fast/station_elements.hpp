@@ -13,6 +13,7 @@
 
 #include "fast/lanes.hpp"
 #include "fast/precision.hpp"
+#include "fast/sectors.hpp"
 
 namespace heraldgauge::fast {
 
@@ -35,31 +36,32 @@ template <class T>
 class Elements {
  public:
   Elements() = default;
-  Elements(int in, int out) : in_(in), out_(out) {
-    std::size_t size = 0;
-    for (int delta = 0; delta <= deltas(); ++delta) {
-      offset_.push_back(size);
-      size += static_cast<std::size_t>(in - delta + 1) * static_cast<std::size_t>(out - delta + 1);
-    }
-    data_.resize(size);
-  }
+  Elements(int in, int out) : in_(in), out_(out), data_(begin_of(deltas() + 1) + over_read, T(0.0)) {}
   int in() const { return in_; }
   int out() const { return out_; }
   int deltas() const { return in_ < out_ ? in_ : out_; }  // largest Delta
   T* row(int delta, int a_in) { return data_.data() + position(delta, a_in); }
   const T* row(int delta, int a_in) const { return data_.data() + position(delta, a_in); }
-  std::vector<T>& data() { return data_; }
-  const std::vector<T>& data() const { return data_; }
+
+  Elements& operator+=(const Elements& other) {
+    for (std::size_t i = 0; i < data_.size(); ++i) data_[i] += other.data_[i];
+    return *this;
+  }
 
  private:
+  // sum of (in + 1 - k)(out + 1 - k) over k = 0..delta-1
+  std::size_t begin_of(int delta) const {
+    const int rows = in_ + 1;
+    const int columns = out_ + 1;
+    return static_cast<std::size_t>(rows * columns * delta - (rows + columns) * (delta * (delta - 1) / 2) +
+                                    (delta - 1) * delta * (2 * delta - 1) / 6);
+  }
   std::size_t position(int delta, int a_in) const {
-    return offset_[static_cast<std::size_t>(delta)] +
-           static_cast<std::size_t>(a_in) * static_cast<std::size_t>(out_ - delta + 1);
+    return begin_of(delta) + static_cast<std::size_t>(a_in) * static_cast<std::size_t>(out_ - delta + 1);
   }
   int in_ = 0;
   int out_ = 0;
-  std::vector<std::size_t> offset_;
-  std::vector<T> data_;
+  Buffer<T> data_;
 };
 
 // Gamma([[a,x],[x,b]]).

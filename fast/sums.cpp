@@ -19,10 +19,15 @@ template <class T>
 Visibility visibility_sum(const KernelResult<T>& result, const Planned& planned, const EndMode<T>& right, double unit) {
   const Layout& layout = planned.layout;
   const auto first = static_cast<std::size_t>(layout.samples);
-  const auto left = static_cast<std::size_t>(layout.visibility_left);
   const auto count = static_cast<std::size_t>(layout.sample_count);
-  VisibilityInput<T> input{&result.finals[left], &right, result.final_tails[left], result.count, unit, {}, 0,
-                           layout.even_in_angle};
+  VisibilityInput<T> input{&result.final_vector, &right,         result.final_tail, result.count, unit, {}, 0,
+                           layout.even_in_angle, &*layout.circle};
+  if (layout.even_in_angle) {
+    const PairedSum<T>* full = &result.sums[static_cast<std::size_t>(layout.aligned_plus)];
+    input.full = {full, full + 1};
+    input.contrast_part = {&result.sums[first], &result.sums[first + count - 1]};
+  }
+  input.samples.reserve(count);
   double largest = 0;
   for (std::size_t s = 0; s < count; ++s) {
     const T relative_to_first = result.sums[first + s].value - result.sums[first].value;

@@ -1,8 +1,6 @@
 #pragma once
-// An upper bound on what the cut-offs leave out (the model's third bound, summed over the number of pairs). Every
-// station whose two sources are within their cut-offs keeps its operator, bounded by its largest row sum e(n,n'); every
-// other place is replaced by w, an upper bound of P(outcome | pair numbers) that knows no interference, so that only
-// Delta = 0 is left.
+// Bounds that stand in for a place with a source beyond its cut-off (the model's third bound, summed over the number of
+// pairs): w, an upper bound of P(outcome | pair numbers) that knows no interference.
 
 #include <vector>
 
@@ -59,13 +57,5 @@ R dropped_ratio(const R& lam, int cutoff) {
   const double growth = (first + 1) / (first - 1);
   return lam * R((first + 2) / (first + 1) * growth * growth);
 }
-
-// Bound on what is left out after some source, for one left outcome: an earlier source beyond its cut-off and the
-// present one within, by its pair number; and the present one beyond.
-template <class R>
-struct Dropped {
-  std::vector<R> within;
-  R beyond = R(0.0);
-};
 
 }  // namespace heraldgauge::fast

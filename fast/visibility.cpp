@@ -4,7 +4,8 @@
 #include <cmath>
 #include <numbers>
 
-#include "fast/kernel.hpp"
+#include "fast/contraction.hpp"
+#include "fast/numbers.hpp"
 
 namespace heraldgauge::fast {
 namespace {
@@ -65,47 +66,48 @@ double best_place(const Harmonics& f, double sign, std::size_t grid) {
   return best;
 }
 
-double weighted_size(const Harmonics& f, int power, std::size_t from) {
+double size_of(const Harmonics& f, std::size_t q) {
+  return f.sine[q] == 0 ? std::fabs(f.cosine[q]) : std::hypot(f.cosine[q], f.sine[q]);
+}
+
+// Bound on the second derivative of the harmonics from a given one on.
+double curvature(const Harmonics& f, std::size_t from) {
   double sum = 0;
-  for (std::size_t q = from; q < f.cosine.size(); ++q) {
-    sum += std::pow(static_cast<double>(q), power) * std::hypot(f.cosine[q], f.sine[q]);
-  }
+  for (std::size_t q = from; q < f.cosine.size(); ++q) sum += static_cast<double>(q * q) * size_of(f, q);
   return sum;
 }
 
 double loss_at(const Harmonics& f, double phi, double noise) {
   const Slopes s = slopes_at(f, phi);
   const double k = static_cast<double>(f.cosine.size());
-  const double slope = std::fabs(s.first) + k * k * noise + 0x1p-52 * weighted_size(f, 2, 1);
+  const double slope = std::fabs(s.first) + k * k * noise + 0x1p-52 * curvature(f, 1);
   return s.second == 0 ? slope * pi : slope * slope / std::fabs(s.second);
 }
 
 // P and its contrast at one angle, exact in the angle given.
 template <class T>
 struct Contracted {
-  PairedSum<T> full{T(0.0), 0, 0};
-  PairedSum<T> contrast_part{T(0.0), 0, 0};
+  PairedSum<T> full;
+  PairedSum<T> contrast_part;
 };
 
 template <class T>
-Sectors<T> raised_end(const VisibilityInput<T>& input, const Rotation& table, int outcome) {
-  const Sectors<T>& vector = *input.vector;
-  if (vector.deltas() == 0 && table.aligned()) {
-    return aligned_end_elements(*input.right, table, outcome, vector.cutoff());
-  }
-  Sectors<T> elements = end_elements(*input.right, table, outcome, vector.cutoff(), vector.deltas());
-  Kernel<T>::raise(elements);
-  return elements;
-}
-
-template <class T>
 Contracted<T> contracted(const VisibilityInput<T>& input, double phi) {
+  for (const std::size_t i : {0, 1}) {
+    if (phi == (i == 0 ? 0 : pi) && input.full[i] != nullptr) return {*input.full[i], *input.contrast_part[i]};
+  }
   constexpr double degrees_per_radian = 180 / pi;
   const model::Rational degrees(phi == pi ? 90.0 : phi / 2 * degrees_per_radian);
   const auto table = rotation(reduced_angle(degrees), input.vector->cutoff());
+  const EndTables<T> tables(*input.right, input.vector->cutoff());
   Contracted<T> result;
-  Kernel<T>::add_pairing(*input.vector, raised_end(input, *table, only_plus), false, result.full);
-  Kernel<T>::add_pairing(*input.vector, raised_end(input, *table, contrast), false, result.contrast_part);
+  const auto contract = [&](int outcome, PairedSum<T>& sum) {
+    const Sectors<T>& vector = *input.vector;
+    const Sectors<T> elements = right_elements(tables, *table, outcome, vector.cutoff(), vector.deltas());
+    Contraction<T>().add(vector, elements, false, sum);
+  };
+  contract(only_plus, result.full);
+  contract(contrast, result.contrast_part);
   return result;
 }
 
@@ -114,18 +116,28 @@ double as_double(const DoubleDouble& x) { return x.hi; }
 
 }  // namespace
 
-Harmonics harmonics_of(const std::vector<double>& samples, bool even) {
+Circle::Circle(int period) {
+  for (int k = 0; k < period; ++k) {
+    const double phi = 2 * pi * k / period;
+    cosine.push_back(std::cos(phi));
+    sine.push_back(std::sin(phi));
+  }
+}
+
+Harmonics harmonics_of(const std::vector<double>& samples, bool even, const Circle& circle) {
   const std::size_t count = samples.size();
   const std::size_t degree = even ? count - 1 : (count - 1) / 2;
+  const std::size_t period = circle.cosine.size();
   Harmonics f{std::vector<double>(degree + 1, 0.0), std::vector<double>(degree + 1, 0.0)};
-  const double period = static_cast<double>(even ? 2 * (count - 1) : count);
+  const double unit_weight = 2.0 / static_cast<double>(period);
   for (std::size_t q = 1; q <= degree; ++q) {
-    for (std::size_t s = 0; s < count; ++s) {
-      const double phi = 2 * pi * static_cast<double>(q * s % static_cast<std::size_t>(period)) / period;
+    for (std::size_t s = 0, at = 0; s < count; ++s) {
       const bool edge = even && (s == 0 || s == count - 1);
-      const double weight = (even && !edge ? 4.0 : 2.0) / period;
-      f.cosine[q] += weight * samples[s] * std::cos(phi);
-      if (!even) f.sine[q] += weight * samples[s] * std::sin(phi);
+      const double weighted = (even && !edge ? 2 * unit_weight : unit_weight) * samples[s];
+      f.cosine[q] += weighted * circle.cosine[at];
+      if (!even) f.sine[q] += weighted * circle.sine[at];
+      at += q;
+      if (at >= period) at -= period;
     }
     if (even && q == degree) f.cosine[q] /= 2;
   }
@@ -134,9 +146,9 @@ Harmonics harmonics_of(const std::vector<double>& samples, bool even) {
 
 Extremes extremes_of(const Harmonics& f, bool even, double noise) {
   // sum q >= 2 of q^2 a_q < a_1 in an even function: f' / sin(phi) has one sign, so 0 and pi are the extremes.
-  const double first = std::hypot(f.cosine[1], f.sine[1]);
+  const double first = size_of(f, 1);
   const double k = static_cast<double>(f.cosine.size());
-  if (even && weighted_size(f, 2, 2) + k * k * k * noise < first) {
+  if (even && curvature(f, 2) + k * k * k * noise < first) {
     const bool at_zero = f.cosine[1] > 0;
     return {at_zero ? 0 : pi, at_zero ? pi : 0, 0, 0};
   }
@@ -154,7 +166,7 @@ Extremes extremes_of(const Harmonics& f, bool even, double noise) {
 
 template <class T>
 Visibility visibility_of(const VisibilityInput<T>& input) {
-  const Harmonics f = harmonics_of(input.samples, input.even);
+  const Harmonics f = harmonics_of(input.samples, input.even, *input.circle);
   const Extremes at = extremes_of(f, input.even, input.sample_error);
   const Contracted<T> top = contracted(input, at.maximum_phi);
   const Contracted<T> bottom = contracted(input, at.minimum_phi);

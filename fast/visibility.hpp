@@ -3,10 +3,11 @@
 // sees polarisation give the harmonics, these the places of maximum and minimum, and there P is contracted anew, in
 // full accuracy.
 
+#include <array>
 #include <vector>
 
 #include "fast/amount.hpp"
-#include "fast/ends.hpp"
+#include "fast/contraction.hpp"
 
 namespace heraldgauge::fast {
 
@@ -22,8 +23,14 @@ struct Harmonics {
   std::vector<double> sine;
 };
 
-// From samples at phi = pi s / (count-1) of an even function, or at 2 pi s / count.
-Harmonics harmonics_of(const std::vector<double>& samples, bool even);
+// Cosines and sines of whole multiples of 2 pi / period.
+struct Circle {
+  std::vector<double> cosine, sine;
+  explicit Circle(int period);
+};
+
+// From samples at phi = pi s / (count-1) of an even function, or at 2 pi s / count, with the circle of that period.
+Harmonics harmonics_of(const std::vector<double>& samples, bool even, const Circle& circle);
 
 struct Extremes {
   double maximum_phi;
@@ -44,6 +51,10 @@ struct VisibilityInput {
   std::vector<double> samples;  // of the contrast, less the first
   double sample_error;
   bool even;
+  const Circle* circle;
+  // P and its contrast at phi = 0 and pi, where these are known already.
+  std::array<const PairedSum<T>*, 2> full{};
+  std::array<const PairedSum<T>*, 2> contrast_part{};
 };
 
 template <class T>
