@@ -33,12 +33,18 @@ std::vector<Interval> shell_sums(const Matrix& state) {
   return sums;
 }
 
-Shells left_shells(const HeraldedChain& link, const EndAsk& left, const std::vector<long>& cutoffs) {
-  const Matrix end = PlaceBound(link.left_end(), left, bits).table(cutoffs.front(), 0);
-  Matrix state(cutoffs.front() + 1, cutoffs.front() + 1, bits);
+// What the left end lets pass, w for each state of source 0.
+Matrix left_end_state(const HeraldedChain& link, const EndAsk& left, long cutoff) {
+  const Matrix end = PlaceBound(link.left_end(), left, bits).table(cutoff, 0);
+  Matrix state(cutoff + 1, cutoff + 1, bits);
   for (long a = 0; a < state.rows(); ++a) {
     for (long b = 0; a + b < state.rows(); ++b) state(a, b) = end(a + b, 0);
   }
+  return state;
+}
+
+Shells left_shells(const HeraldedChain& link, const EndAsk& left, const std::vector<long>& cutoffs) {
+  Matrix state = left_end_state(link, left, cutoffs.front());
   Shells shells;
   StationSequence stations(link, cutoffs, 0, bits);
   for (std::size_t k = 0;; ++k) {
@@ -55,6 +61,13 @@ Interval total(const std::vector<Interval>& values) {
   Interval sum(bits);
   for (const Interval& value : values) sum += value;
   return sum;
+}
+
+// The same weight at the last source, all pair numbers together, without those at the others.
+double log2_herald_of(const HeraldedChain& link, const EndAsk& left, const std::vector<long>& cutoffs) {
+  const SectorStack first{left_end_state(link, left, cutoffs.front())};
+  const std::vector<SectorStack> last = contract_stations(link, cutoffs, Strings::corrected, {first}, bits);
+  return log2_of(total(shell_sums(last.front().front())));
 }
 
 // log2 of the weight that everything on one side lends to n = 0..last pairs of a source: sum_m w(m, n) shells(m).
@@ -86,13 +99,6 @@ struct Surroundings {
 Surroundings surroundings(const HeraldedChain& link, const EndAsk& left, const EndAsk& right,
                           const std::vector<long>& cutoffs) {
   return {left_shells(link, left, cutoffs), left_shells(mirrored(link), right, {cutoffs.rbegin(), cutoffs.rend()})};
-}
-
-std::vector<PlaceBound> all_places(const HeraldedChain& link, const EndAsk& left, const EndAsk& right) {
-  std::vector<PlaceBound> places{PlaceBound(link.left_end(), left, bits)};
-  for (std::size_t k = 0; k < link.station_count(); ++k) places.emplace_back(link.station(k), bits);
-  places.emplace_back(link.right_end(), right, bits);
-  return places;
 }
 
 // The least cut-off of source k that leaves at most the share beyond it, all other sources within their provisional
@@ -130,10 +136,13 @@ bool covers(const std::vector<long>& provisional, const std::vector<long>& chose
 }  // namespace
 
 Cutoffs estimated_cutoffs(const HeraldedChain& link, const EndAsk& left, const EndAsk& right, double log2_tail) {
-  const std::vector<PlaceBound> places = all_places(link, left, right);
-  const double log2_share = log2_tail - std::log2(2.0 * static_cast<double>(link.source_count()));
   std::vector<long> provisional;
   for (const model::Source& source : link.chain.sources) provisional.push_back(most_pairs(source).value_or(4));
+  if (keep_all_pairs(link.chain.sources, provisional)) {
+    return {provisional, log2_herald_of(link, left, provisional)};
+  }
+  const std::vector<PlaceBound> places = all_places(link, left, right, bits);
+  const double log2_share = log2_tail - std::log2(2.0 * static_cast<double>(link.source_count()));
   double before = nothing;
   for (long size = 8;; size *= 2) {
     const Surroundings around = surroundings(link, left, right, provisional);

@@ -95,12 +95,14 @@ long largest_order(const EndPlace& end, const std::vector<EndAsk>& asks) {
 std::vector<std::vector<Interval>> tail_by_operators(const HeraldedChain& link, const std::vector<long>& cutoffs,
                                                      const std::vector<EndAsk>& left, const std::vector<EndAsk>& right,
                                                      Precision bits) {
-  std::vector<long> orders{largest_order(link.left_end(), left)};
-  std::vector<PlaceBound> stations;
-  for (std::size_t k = 0; k < link.station_count(); ++k) {
-    stations.emplace_back(link.station(k), bits);
-    orders.push_back(stations.back().order());
+  std::vector<std::vector<Interval>> bounds(left.size());
+  if (keep_all_pairs(link.chain.sources, cutoffs)) {  // a sum of no terms
+    bounds.assign(left.size(), std::vector<Interval>(right.size(), Interval(bits)));
+    return bounds;
   }
+  std::vector<long> orders{largest_order(link.left_end(), left)};
+  const std::vector<PlaceBound> stations = station_bounds(link, bits);
+  for (const PlaceBound& station : stations) orders.push_back(station.order());
   orders.push_back(largest_order(link.right_end(), right));
   const auto shells = [&](std::size_t k) {
     const model::Source& source = link.chain.sources[k];
@@ -120,7 +122,6 @@ std::vector<std::vector<Interval>> tail_by_operators(const HeraldedChain& link, 
     for (Configurations& state : states) state = through_station(products, w, present, behind, state, bits);
     present = behind;
   }
-  std::vector<std::vector<Interval>> bounds(left.size());
   for (const EndAsk& ask : right) {
     const Matrix w = PlaceBound(link.right_end(), ask, bits).table(present.last(), 0);
     for (std::size_t i = 0; i < left.size(); ++i) bounds[i].push_back(closed(states[i], w, cutoffs.back()));

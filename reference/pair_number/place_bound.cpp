@@ -76,4 +76,23 @@ Matrix PlaceBound::table(long first_last, long second_last) const {
   return bound;
 }
 
+std::vector<PlaceBound> station_bounds(const HeraldedChain& link, Precision bits) {
+  std::vector<PlaceBound> bounds;
+  for (std::size_t k = 0; k < link.station_count(); ++k) {
+    if (k > 0 && link.station(k - 1) == link.station(k)) {
+      bounds.push_back(bounds.back());
+    } else {
+      bounds.emplace_back(link.station(k), bits);
+    }
+  }
+  return bounds;
+}
+
+std::vector<PlaceBound> all_places(const HeraldedChain& link, const EndAsk& left, const EndAsk& right, Precision bits) {
+  std::vector<PlaceBound> places = station_bounds(link, bits);
+  places.insert(places.begin(), PlaceBound(link.left_end(), left, bits));
+  places.emplace_back(link.right_end(), right, bits);
+  return places;
+}
+
 }  // namespace heraldgauge::reference::pair_number

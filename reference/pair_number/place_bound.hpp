@@ -10,9 +10,8 @@
 #include <vector>
 
 #include "reference/pair_number/dark_weights.hpp"
-#include "reference/pair_number/end_operator.hpp"
+#include "reference/pair_number/heralded_chain.hpp"
 #include "reference/pair_number/matrix.hpp"
-#include "reference/pair_number/station_operator.hpp"
 
 namespace heraldgauge::reference::pair_number {
 
@@ -37,5 +36,10 @@ class PlaceBound {
   std::vector<Interval> registering_;  // D'_t
   Interval first_transmittance_, second_transmittance_;
 };
+
+// The bounds of all stations in order; that of a station like the one before it is not worked out again.
+std::vector<PlaceBound> station_bounds(const HeraldedChain& link, Precision bits);
+// The same between those of the left and the right end.
+std::vector<PlaceBound> all_places(const HeraldedChain& link, const EndAsk& left, const EndAsk& right, Precision bits);
 
 }  // namespace heraldgauge::reference::pair_number

@@ -1,5 +1,7 @@
 #include "reference/pair_number/source_weights.hpp"
 
+#include <algorithm>
+
 namespace heraldgauge::reference::pair_number {
 
 using model::Real;
@@ -9,6 +11,13 @@ std::optional<long> most_pairs(const model::Source& source) {
   if (source.pair_parameter.is_zero()) return 0;
   if (source.kind == SourceKind::ideal_pair) return 1;
   return std::nullopt;
+}
+
+bool keep_all_pairs(const std::vector<model::Source>& sources, const std::vector<long>& cutoffs) {
+  return std::equal(sources.begin(), sources.end(), cutoffs.begin(), [](const model::Source& source, long cutoff) {
+    const std::optional<long> most = most_pairs(source);
+    return most && *most <= cutoff;
+  });
 }
 
 std::vector<Interval> state_weights(const model::Source& source, long last, Precision bits) {

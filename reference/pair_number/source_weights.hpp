@@ -12,6 +12,9 @@ namespace heraldgauge::reference::pair_number {
 // The largest number of pairs that the source can give, where there is one: ideal pairs 1 (0 with p = 0), lam = 0: 0.
 std::optional<long> most_pairs(const model::Source& source);
 
+// Whether no source can give more pairs than its cut-off.
+bool keep_all_pairs(const std::vector<model::Source>& sources, const std::vector<long>& cutoffs);
+
 // pi(n), n = 0..last: the probability of n pairs, H and V together; squeezed (n+1) lam^n (1-lam)^2, ideal 1-p, p.
 std::vector<Interval> pair_probabilities(const model::Source& source, long last, Precision bits);
 

@@ -18,13 +18,6 @@ Interval ratio_bound(const Interval& lam, long m, long first_order, long second_
   return lam * fraction(m + 2, m + 1) * fraction(m + 1, m + 1 - first_order) * fraction(m + 1, m + 1 - second_order);
 }
 
-std::vector<PlaceBound> all_places(const HeraldedChain& link, const EndAsk& left, const EndAsk& right, Precision bits) {
-  std::vector<PlaceBound> places{PlaceBound(link.left_end(), left, bits)};
-  for (std::size_t k = 0; k < link.station_count(); ++k) places.emplace_back(link.station(k), bits);
-  places.emplace_back(link.right_end(), right, bits);
-  return places;
-}
-
 // The scalar chain of bound 2: for every n of the present source, the weight with no source beyond its cut-off so far,
 // and with at least one.
 struct Scalars {

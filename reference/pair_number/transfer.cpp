@@ -3,37 +3,11 @@
 #include <algorithm>
 
 #include "reference/pair_number/source_weights.hpp"
+#include "reference/pair_number/station_run.hpp"
 #include "reference/pair_number/station_sequence.hpp"
 
 namespace heraldgauge::reference::pair_number {
 namespace {
-
-SectorStack empty_stack(long cut, long sectors, Precision bits) {
-  SectorStack stack;
-  for (long sector = 0; sector <= sectors; ++sector) stack.emplace_back(cut - sector + 1, cut - sector + 1, bits);
-  return stack;
-}
-
-void accumulate_all(Matrix& out, const std::vector<Product>& products, const Matrix& in) {
-  for (const Product& product : products) accumulate(out, product, in);
-}
-
-// One sector of all states through one station.
-void step_sector(const StationOperator& station, Strings strings, long sector, const std::vector<SectorStack>& before,
-                 std::vector<SectorStack>& after) {
-  const auto place = static_cast<std::size_t>(sector);
-  if (strings == Strings::corrected) {
-    const std::vector<Product> products = station.products(sector, Outcomes::corrected);
-    for (std::size_t s = 0; s < before.size(); ++s) accumulate_all(after[s][place], products, before[s][place]);
-    return;
-  }
-  const std::vector<Product> plus = station.products(sector, Outcomes::plus_only);
-  const std::vector<Product> minus = station.products(sector, Outcomes::minus_only);
-  for (std::size_t s = 0; s < before.size(); ++s) {
-    accumulate_all(after[s][place], plus, before[s][place]);
-    accumulate_all(after[s][place], minus, before[s ^ 1][place]);
-  }
-}
 
 void apply_weights_to_all(std::vector<SectorStack>& states, const std::vector<Interval>& weights) {
   for (SectorStack& state : states) {
@@ -41,6 +15,17 @@ void apply_weights_to_all(std::vector<SectorStack>& states, const std::vector<In
       apply_weights(state[sector], static_cast<long>(sector), weights);
     }
   }
+}
+
+// The matrices of one sector, taken out of all states.
+std::vector<Matrix> taken_sector(std::vector<SectorStack>& states, long sector) {
+  std::vector<Matrix> matrices;
+  for (SectorStack& state : states) matrices.push_back(std::move(state[static_cast<std::size_t>(sector)]));
+  return matrices;
+}
+
+void put_sector(std::vector<SectorStack>& states, long sector, std::vector<Matrix> matrices) {
+  for (std::size_t s = 0; s < states.size(); ++s) states[s][static_cast<std::size_t>(sector)] = std::move(matrices[s]);
 }
 
 }  // namespace
@@ -81,12 +66,16 @@ std::vector<SectorStack> contract_stations(const HeraldedChain& link, const std:
   const long sectors = static_cast<long>(states.front().size()) - 1;
   apply_weights_to_all(states, state_weights(link.chain.sources.front(), cutoffs.front(), bits));
   StationSequence stations(link, cutoffs, sectors, bits);
-  for (std::size_t k = 0; k < link.station_count(); ++k) {
+  std::size_t length = 0;
+  for (std::size_t k = 0; k < link.station_count(); k += length) {
+    length = run_length(link, cutoffs, k);
     const StationOperator& station = stations.at(k);
-    std::vector<SectorStack> after(states.size(), empty_stack(cutoffs[k + 1], sectors, bits));
-    for (long sector = 0; sector <= sectors; ++sector) step_sector(station, strings, sector, states, after);
-    apply_weights_to_all(after, state_weights(link.chain.sources[k + 1], cutoffs[k + 1], bits));
-    states = std::move(after);
+    const std::vector<Interval> weights = state_weights(link.chain.sources[k + 1], cutoffs[k + 1], bits);
+    for (long sector = 0; sector <= sectors; ++sector) {
+      const SectorStep step(station, strings, sector, weights);
+      std::vector<Matrix> before = taken_sector(states, sector);
+      put_sector(states, sector, through_run(step, length, std::move(before), cutoffs[k + 1] - sector + 1, bits));
+    }
   }
   return states;
 }

@@ -26,7 +26,7 @@ void accumulate(Matrix& out, const Product& product, const Matrix& in);
 enum class Strings { corrected, by_parity };
 
 // Takes states from the first source (weights not yet applied) to the last (weights applied). By parity, the states
-// come in pairs (even, odd).
+// come in pairs (even, odd). Runs of like stations are taken as powers where that costs less (station_run.hpp).
 std::vector<SectorStack> contract_stations(const HeraldedChain& link, const std::vector<long>& cutoffs, Strings strings,
                                            std::vector<SectorStack> states, Precision bits);
 
