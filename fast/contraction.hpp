@@ -30,9 +30,11 @@ void raise(Sectors<T>& elements) {
 
 // What the right end sees at an angle; only sector 0 unless `sectors`.
 template <class T>
-Sectors<T> right_elements(const EndTables<T>& end, const Rotation& rotation, int outcome, int cutoff, int deltas) {
+Sectors<T> right_elements(const EndTables<T>& end, const Rotation& rotation, int outcome, int cutoff, int deltas,
+                          bool majorant = false) {
   if (deltas == 0 && rotation.aligned()) return aligned_end_elements(end, rotation, outcome, cutoff);
   Sectors<T> elements = end_elements(end, rotation, outcome, cutoff, deltas);
+  if (majorant) make_majorant(elements);
   raise(elements);
   return elements;
 }

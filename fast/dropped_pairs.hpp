@@ -46,9 +46,12 @@ class DroppedPairs {
     const int in = plan_.cutoffs[k];
     const int out = plan_.cutoffs[k + 1];
     const StationMode<T>& mode = modes_.stations[k];
-    const double patterns = pattern_count(plan_.stations[k].terms);
+    const StationPlan& plan = plan_.stations[k];
+    const double patterns = pattern_count(plan.terms);
     const auto w = [&](int n, int to) {
-      return R(bound_slack) * station_bound(mode.dark, mode.registering_r, mode.registering_l, n, to, patterns);
+      return R(bound_slack) *
+             (plan.free ? free_station_bound(mode.dark, mode.registering_r, mode.registering_l, n, to, clicks_of(plan))
+                        : station_bound(mode.dark, mode.registering_r, mode.registering_l, n, to, patterns));
     };
     into_beyond_.clear();
     from_beyond_.clear();

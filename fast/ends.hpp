@@ -5,6 +5,7 @@
 #include <array>
 #include <vector>
 
+#include "fast/demand.hpp"
 #include "fast/dot.hpp"
 #include "fast/precision.hpp"
 #include "fast/rotation.hpp"
@@ -14,6 +15,7 @@ namespace heraldgauge::fast {
 
 // The outcomes 00, 01, 10, 11 are numbered 2*plus + cross. A recorded bit gets half of the double clicks. The contrast
 // of 10 is W(p, n-p) - W(0, n), what is left of it when the part that sees no polarisation is taken off.
+// Other combinations of what a free pattern asks are free_end(plus, cross).
 enum EndOutcome {
   silent_both = 0,
   only_cross = 1,
@@ -21,8 +23,15 @@ enum EndOutcome {
   both_click = 3,
   bit_plus = 4,
   bit_cross = 5,
-  contrast = 6
+  contrast = 6,
+  first_free = 7
 };
+
+inline int free_end(Demand plus, Demand cross) {
+  return first_free + 3 * static_cast<int>(plus) + static_cast<int>(cross);
+}
+inline Demand demand_of_plus(int outcome) { return static_cast<Demand>((outcome - first_free) / 3); }
+inline Demand demand_of_cross(int outcome) { return static_cast<Demand>((outcome - first_free) % 3); }
 
 template <class T>
 struct EndMode {
@@ -50,6 +59,11 @@ struct ClickTable {
       some = some + passed * end.registering[detector];
       passed = passed * end.missing[detector];
     }
+  }
+
+  T meets(Demand demand, std::size_t photons) const {
+    if (demand == Demand::anything) return T(1.0);
+    return demand == Demand::silent ? silent[photons] : click[photons];
   }
 };
 
@@ -80,8 +94,10 @@ T outcome_weight(const EndTables<T>& end, int outcome, int p, int q) {
     case bit_cross:
       return cross.click[j] * (plus.silent[i] + half * plus.click[i]);
     // click+(p) silent(n-p) - d silent(n), with silent(n) = silent(n-p) s_cross^p
-    default:
+    case contrast:
       return cross.silent[j] * (plus.live * plus.caught[i] + plus.dark * cross.caught[i]);
+    default:
+      return plus.meets(demand_of_plus(outcome), i) * cross.meets(demand_of_cross(outcome), j);
   }
 }
 
@@ -109,6 +125,18 @@ Sectors<T> end_elements(const EndTables<T>& end, const Rotation& rotation, int o
     }
   }
   return elements;
+}
+
+// Sectors above 0 by the geometric mean of the two diagonal elements, which bounds them (Cauchy and Schwarz).
+template <class T>
+void make_majorant(Sectors<T>& elements) {
+  for (int delta = 1; delta <= elements.deltas(); ++delta) {
+    for (int a = 0; a <= elements.cutoff() - delta; ++a) {
+      for (int b = 0; b <= elements.cutoff() - delta - a; ++b) {
+        elements.row(delta, a)[b] = geometric_mean(elements.row(0, a + delta)[b], elements.row(0, a)[b + delta]);
+      }
+    }
+  }
 }
 
 // Ends at 0 or 90 degrees see photon numbers as they are: only sector 0, no sum.

@@ -6,6 +6,7 @@
 #include <algorithm>
 
 #include "fast/capacity.hpp"
+#include "fast/pattern_value.hpp"
 #include "fast/quantities.hpp"
 
 namespace heraldgauge::fast {
@@ -111,10 +112,20 @@ void evaluate_precisely(Point& point, const std::vector<Quantity>& quantities, s
   for (std::size_t i = 0; i < where.size(); ++i) values[where[i]] = better[i];
 }
 
+void give_pattern(const Point& point, const model::Pattern& pattern, std::span<Value> values) {
+  for (Value& value : values) {
+    if (value.quantity.kind != QuantityKind::pattern_probability) continue;
+    value =
+        pattern_value(point.numbers, point.modes, point.cutoffs, pattern, unit_of<DoubleDouble>(point), tail_allowed);
+  }
+}
+
 // Takes more pairs, then double-double, until the bounds are met or nothing more can be done.
-void improve(const Accuracy& accuracy, Point& point, const std::vector<Quantity>& quantities, std::span<Value> values) {
+void improve(const Accuracy& accuracy, Point& point, const std::vector<Quantity>& quantities,
+             const std::optional<model::Pattern>& pattern, std::span<Value> values) {
   evaluate_with_more_pairs<double>(accuracy, point, quantities, values);
   evaluate_precisely(point, quantities, values);
+  if (pattern) give_pattern(point, *pattern, values);
   for (Value& value : values) {
     if (value.status != Status::computed || value.relative_error_bound < bound_served) continue;
     value = {value.quantity, Status::declined, "its terms cancel below the precision of double-double", {}, 0};
@@ -135,8 +146,9 @@ void decline(const model::Chain& chain, const std::vector<Quantity>& quantities,
 class Block {
  public:
   // answers: one value a quantity, chain by chain.
-  Block(std::span<const model::Chain> chains, const std::vector<Quantity>& quantities, std::span<Value> answers)
-      : quantities_(quantities), needs_(needs_of(quantities)), answers_(answers) {
+  Block(std::span<const model::Chain> chains, const std::vector<Quantity>& quantities,
+        const std::optional<model::Pattern>& pattern, std::span<Value> answers)
+      : quantities_(quantities), pattern_(pattern), needs_(needs_of(quantities)), answers_(answers) {
     points_.reserve(chains.size());
     for (const model::Chain& chain : chains) points_.push_back(prepare(chain));
   }
@@ -195,7 +207,7 @@ class Block {
   }
 
   void improve_further(std::size_t index, const Accuracy& accuracy) {
-    improve(accuracy, points_[index], quantities_, values_of(index));
+    improve(accuracy, points_[index], quantities_, pattern_, values_of(index));
   }
 
   std::span<Value> values_of(std::size_t index) const {
@@ -204,6 +216,7 @@ class Block {
 
   static constexpr std::size_t lanes = batch_width;
   const std::vector<Quantity>& quantities_;
+  const std::optional<model::Pattern>& pattern_;
   Needs needs_;
   std::span<Value> answers_;
   Buffer<Point> points_;
@@ -215,20 +228,20 @@ constexpr std::size_t block_size = 64;
 }  // namespace
 
 std::vector<Value> evaluate(const model::Chain& chain, const std::vector<Quantity>& quantities,
-                            const std::optional<model::Pattern>&) {
+                            const std::optional<model::Pattern>& pattern) {
   std::vector<Value> answer(quantities.size());
-  Block(std::span(&chain, 1), quantities, answer).run();
+  Block(std::span(&chain, 1), quantities, pattern, answer).run();
   return answer;
 }
 
 void evaluate_all(std::span<const model::Chain> chains, const std::vector<Quantity>& quantities,
-                  const std::optional<model::Pattern>&, unsigned threads, std::vector<Value>& answers) {
+                  const std::optional<model::Pattern>& pattern, unsigned threads, std::vector<Value>& answers) {
   answers.resize(chains.size() * quantities.size());
   const std::size_t blocks = (chains.size() + block_size - 1) / block_size;
   const auto run_block = [&](std::size_t block) {
     const std::size_t first = block * block_size;
     const std::size_t count = std::min(block_size, chains.size() - first);
-    Block(chains.subspan(first, count), quantities,
+    Block(chains.subspan(first, count), quantities, pattern,
           std::span(answers).subspan(first * quantities.size(), count * quantities.size()))
         .run();
   };

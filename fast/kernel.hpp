@@ -59,6 +59,7 @@ class Kernel {
       const auto table = rotation(view.angle, cutoff);
       Sectors<T> vector = deltas == 0 && table->aligned() ? aligned_end_elements(tables, *table, view.outcome, cutoff)
                                                           : end_elements(tables, *table, view.outcome, cutoff, deltas);
+      if (plan_.majorant) make_majorant(vector);
       lower(vector);
       State state;
       state.push_back(std::move(vector));
@@ -88,7 +89,7 @@ class Kernel {
 
   void pass_station(std::size_t k) {
     if (!plan_.stations[k].as_before) {
-      station_.prepare(plan_.stations[k], modes_.stations[k], plan_.cutoffs[k], plan_.cutoffs[k + 1]);
+      station_.prepare(plan_.stations[k], modes_.stations[k], plan_.majorant, plan_.cutoffs[k], plan_.cutoffs[k + 1]);
       dropped_.prepare(k);
     }
     weigh_source(k + 1, next_scale_);
@@ -155,7 +156,8 @@ class Kernel {
     right.reserve(plan_.right.size());
     for (const EndView& view : plan_.right) {
       const auto table = rotation(view.angle, cutoff);
-      right.push_back(right_elements(tables, *table, view.outcome, cutoff, view.sectors ? plan_.deltas() : 0));
+      right.push_back(
+          right_elements(tables, *table, view.outcome, cutoff, view.sectors ? plan_.deltas() : 0, plan_.majorant));
     }
     sums.reserve(plan_.pairings.size());
     for (const Pairing& pairing : plan_.pairings) sums.push_back(paired(pairing, right));

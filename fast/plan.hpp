@@ -27,6 +27,9 @@ struct StationPlan {
   bool polarisations_alike;                       // V as H
   bool as_before;                                 // same numbers and cut-offs as the station before
   std::vector<Term> terms;
+  // A free pattern: one term, whose two factors are what is demanded of [polarisation][c, d].
+  bool free = false;
+  std::array<std::array<Demand, 2>, 2> demands{};
   friend bool operator==(const StationPlan&, const StationPlan&) = default;
 };
 
@@ -70,6 +73,7 @@ struct Plan {
   bool polarisations_alike = false;  // at every station
   bool parity = false;               // carry even and odd numbers of psi- apart
   bool odd = false;                  // an odd number of psi- for certain
+  bool majorant = false;             // of a free pattern: sizes of all terms instead of their sum
   int final_view = -1;               // the left view whose vector is asked for at the right end, if any
   friend bool operator==(const Plan&, const Plan&) = default;
 

@@ -27,6 +27,17 @@ std::vector<Term> terms_of(model::Herald herald, const std::array<bool, 2>& alik
 
 bool aligned(const model::Rational& degrees) { return degrees == 0 || degrees == 90; }
 
+Demand demand_of(const model::Ask& ask) {
+  if (ask.kind == model::Ask::Kind::not_looked_at) return Demand::anything;
+  return ask.kind == model::Ask::Kind::silent ? Demand::silent : Demand::clicks;
+}
+
+// Without stations only the difference of the angles matters.
+std::pair<model::Rational, model::Rational> analyser_angles(const ChainNumbers& numbers) {
+  if (!numbers.stations.empty()) return {numbers.left.analyser_deg, numbers.right.analyser_deg};
+  return {0, reduced_angle(numbers.right.analyser_deg - numbers.left.analyser_deg)};
+}
+
 class Planner {
  public:
   Planner(const ChainNumbers& numbers, const ExactModes& modes, Planned& planned)
@@ -248,11 +259,8 @@ Planned make_plan(const ChainNumbers& numbers, const ExactModes& modes, const Ne
   planned.plan.cutoffs = std::move(cutoffs);
   for (const SourceNumbers& source : numbers.sources) planned.plan.squeezed.push_back(source.squeezed);
   Planner planner(numbers, modes, planned);
-  // Without stations only the difference of the angles matters, and both bases are one.
-  const bool direct = numbers.stations.empty();
-  const model::Rational left = direct ? model::Rational(0) : numbers.left.analyser_deg;
-  const model::Rational right =
-      direct ? reduced_angle(numbers.right.analyser_deg - numbers.left.analyser_deg) : numbers.right.analyser_deg;
+  const bool direct = numbers.stations.empty();  // both bases are one
+  const auto [left, right] = analyser_angles(numbers);
   planner.add_stations(needs.diagonal && !direct);
   planned.layout.rectilinear = planner.add_table(0, 0);
   planner.add_herald();
@@ -261,6 +269,30 @@ Planned make_plan(const ChainNumbers& numbers, const ExactModes& modes, const Ne
   if (needs.diagonal && !direct) planner.add_diagonal();
   if (needs.visibility) planner.add_samples(left);
   return planned;
+}
+
+Plan make_pattern_plan(const ChainNumbers& numbers, const ExactModes& modes, const model::Pattern& pattern,
+                       std::vector<int> cutoffs) {
+  Plan plan;
+  plan.cutoffs = std::move(cutoffs);
+  for (const SourceNumbers& source : numbers.sources) plan.squeezed.push_back(source.squeezed);
+  for (std::size_t k = 0; k < numbers.stations.size(); ++k) {
+    const auto& asks = pattern.stations[k];
+    StationPlan station{modes.structure[k].overlap, {false, false}, false, false, {{0, 0, false}}};
+    station.free = true;
+    for (std::size_t p = 0; p < 2; ++p) station.demands[p] = {demand_of(asks[p]), demand_of(asks[p + 2])};
+    plan.stations.push_back(std::move(station));
+  }
+  const auto [left, right] = analyser_angles(numbers);
+  const bool sectors = !aligned(left) && !aligned(right);
+  const auto end = [](const std::array<model::Ask, 2>& asks) {
+    return free_end(demand_of(asks[0]), demand_of(asks[1]));
+  };
+  plan.left.push_back({left, end(pattern.left), sectors, false});
+  plan.right.push_back({right, end(pattern.right), sectors, false});
+  plan.pairings.push_back({0, 0, 0});
+  plan.herald.push_back({0, 1.0});  // scales the vector
+  return plan;
 }
 
 std::optional<std::vector<int>> first_cutoffs(const ChainNumbers& numbers, const ExactModes& modes) {

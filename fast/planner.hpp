@@ -6,6 +6,7 @@
 
 #include "fast/modes.hpp"
 #include "fast/visibility.hpp"
+#include "reference/model/pattern.hpp"
 #include "reference/model/quantity.hpp"
 
 namespace heraldgauge::fast {
@@ -38,6 +39,10 @@ struct Planned {
   Layout layout;
 };
 Planned make_plan(const ChainNumbers& numbers, const ExactModes& modes, const Needs& needs, std::vector<int> cutoffs);
+
+// The one probability of a free pattern, at the ends' own angles; no ask of it counts photons.
+Plan make_pattern_plan(const ChainNumbers& numbers, const ExactModes& modes, const model::Pattern& pattern,
+                       std::vector<int> cutoffs);
 
 // Pairs to keep per source so that the tail is likely below 5e-14 of every number; none where a source would need more
 // than largest_pairs. The kernel's bound decides whether it was enough.

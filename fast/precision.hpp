@@ -71,6 +71,17 @@ Lanes<Width> magnification(const Lanes<Width>& more, const Lanes<Width>& less) {
   return result;
 }
 
+inline double geometric_mean(double a, double b) { return std::sqrt(a) * std::sqrt(b); }
+inline DoubleDouble geometric_mean(const DoubleDouble& a, const DoubleDouble& b) {
+  return square_root(a) * square_root(b);
+}
+template <int Width>
+Lanes<Width> geometric_mean(const Lanes<Width>& a, const Lanes<Width>& b) {
+  Lanes<Width> result;
+  for (int i = 0; i < Width; ++i) result.set_lane(i, geometric_mean(a.lane(i), b.lane(i)));
+  return result;
+}
+
 // A power of two that brings x near 1, a lane; 1 for zero.
 inline int binary_exponent(double x) { return x > 0 ? std::ilogb(x) : 0; }
 

@@ -39,9 +39,8 @@ class Former {
       if (!bottlenecks_) bottlenecks_ = bottlenecks_of(chain_);
       return capacity(*bottlenecks_, quantity);
     }
-    if (quantity.kind == QuantityKind::pattern_probability) {
-      return {
-          quantity, Status::declined, "pattern_probability of a free pattern is not served by this evaluator", {}, 0};
+    if (quantity.kind == QuantityKind::pattern_probability) {  // pattern_value.hpp gives it where there is a pattern
+      return {quantity, Status::declined, "no pattern is given", {}, 0};
     }
     const bool no_stations = chain_.stations.empty();
     switch (quantity.kind) {

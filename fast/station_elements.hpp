@@ -11,6 +11,8 @@
 
 #include <vector>
 
+#include <array>
+
 #include "fast/lanes.hpp"
 #include "fast/precision.hpp"
 #include "fast/sectors.hpp"
@@ -46,6 +48,9 @@ class Elements {
   Elements& operator+=(const Elements& other) {
     for (std::size_t i = 0; i < data_.size(); ++i) data_[i] += other.data_[i];
     return *this;
+  }
+  void add_scaled(const T& factor, const Elements& other) {
+    for (std::size_t i = 0; i < data_.size(); ++i) data_[i] += factor * other.data_[i];
   }
 
  private:
@@ -85,33 +90,57 @@ Elements<T> second_quantised(const T& a, const T& b, const T& x, int in, int out
   return g;
 }
 
-// Gamma(M0 + K) - Gamma(M0), given g = Gamma(M0), M0 + K = [[a,x],[x,b]], K = [[kr,z],[z,kl]].
+// What one more photon adds to a difference D: K times the elements G.
 template <class T>
-Elements<T> difference(const Elements<T>& g, const T& a, const T& b, const T& x, const T& kr, const T& kl, const T& z) {
-  const int in = g.in();
-  const int out = g.out();
+struct Addend {
+  const Elements<T>& g;
+  T kr, kl, z;  // K = [[kr,z],[z,kl]]
+};
+
+// D with D |0> = 0 and D a_q^dag = sum_p a_p^dag (M_pq D + sum over the addends of K_pq G), M = [[a,x],[x,b]].
+template <class T, std::size_t N>
+Elements<T> difference(const T& a, const T& b, const T& x, const std::array<Addend<T>, N>& addends) {
+  const int in = addends[0].g.in();
+  const int out = addends[0].g.out();
   Elements<T> d(in, out);
   for (int delta = 0; delta <= d.deltas(); ++delta) {
     for (int i = 0; i <= in - delta; ++i) {
-      T value = i == 0 ? T(0.0) : a * d.row(delta, i - 1)[0] + kr * g.row(delta, i - 1)[0];
-      if (delta > 0) value += x * d.row(delta - 1, i)[0] + z * g.row(delta - 1, i)[0];
+      T value(0.0);
+      if (i > 0) value += a * d.row(delta, i - 1)[0];
+      if (delta > 0) value += x * d.row(delta - 1, i)[0];
+      for (const Addend<T>& k : addends) {
+        if (i > 0) value += k.kr * k.g.row(delta, i - 1)[0];
+        if (delta > 0) value += k.z * k.g.row(delta - 1, i)[0];
+      }
       d.row(delta, i)[0] = value;
     }
   }
   for (int delta = d.deltas(); delta >= 0; --delta) {
     for (int i = 0; i <= in - delta; ++i) {
-      T* to = d.row(delta, i);
-      const T* from = g.row(delta, i);
       const bool coupled = i > 0 && delta < d.deltas();
-      const T* d_up = coupled ? d.row(delta + 1, i - 1) : nullptr;
-      const T* g_up = coupled ? g.row(delta + 1, i - 1) : nullptr;
+      T* to = d.row(delta, i);
+      const T* up = coupled ? d.row(delta + 1, i - 1) : nullptr;
+      std::array<const T*, N> from, from_up;
+      for (std::size_t k = 0; k < N; ++k) {
+        from[k] = addends[k].g.row(delta, i);
+        from_up[k] = coupled ? addends[k].g.row(delta + 1, i - 1) : nullptr;
+      }
       for (int j = 0; j < out - delta; ++j) {
-        const T own = b * to[j] + kl * from[j];
-        to[j + 1] = coupled ? own + (x * d_up[j] + z * g_up[j]) : own;
+        T sum = coupled ? b * to[j] + x * up[j] : b * to[j];
+        for (std::size_t k = 0; k < N; ++k) {
+          sum += coupled ? addends[k].kl * from[k][j] + addends[k].z * from_up[k][j] : addends[k].kl * from[k][j];
+        }
+        to[j + 1] = sum;
       }
     }
   }
   return d;
+}
+
+// Gamma(M0 + K) - Gamma(M0), given g = Gamma(M0), M0 + K = [[a,x],[x,b]], K = [[kr,z],[z,kl]].
+template <class T>
+Elements<T> difference(const Elements<T>& g, const T& a, const T& b, const T& x, const T& kr, const T& kl, const T& z) {
+  return difference<T, 1>(a, b, x, {Addend<T>{g, kr, kl, z}});
 }
 
 // One detector clicks and the other stays silent, with the sign (-1)^Delta of a click at d left out. `loss` rises to

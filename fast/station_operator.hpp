@@ -4,6 +4,7 @@
 #include <array>
 #include <vector>
 
+#include "fast/pattern_elements.hpp"
 #include "fast/plan.hpp"
 #include "fast/station_elements.hpp"
 
@@ -20,7 +21,10 @@ struct TermFactors {
 template <class T>
 class StationOperator {
  public:
-  void prepare(const StationPlan& station, const StationMode<T>& mode, int in, int out) {
+  void prepare(const StationPlan& station, const StationMode<T>& mode, bool majorant, int in, int out) {
+    if constexpr (Precision<T>::width == 1) {  // free patterns go through the kernel alone
+      if (station.free) return prepare_free(station, mode, majorant, in, out);
+    }
     loss_ = Rough<T>(1.0);
     shared_ = station.polarisations_alike;
     alike_ = station.alike;
@@ -37,10 +41,23 @@ class StationOperator {
     return {elements(0, term.h), elements(shared_ ? 0 : 1, term.v), shared_ && (term.h == term.v || alike_[0])};
   }
 
+  // Three recurrences one upon the other, the last with two addends, against one difference.
+  static constexpr double free_pattern_roundings = 4;
+
   // By how much subtractions magnified the error of an element, at most.
   const Rough<T>& loss() const { return loss_; }
 
  private:
+  void prepare_free(const StationPlan& station, const StationMode<T>& mode, bool majorant, int in, int out) {
+    loss_ = Rough<T>(free_pattern_roundings);
+    shared_ = false;
+    alike_ = {false, false};
+    for (std::size_t p = 0; p < 2; ++p) {
+      elements_[p][0] =
+          PatternElements<T>(mode.click[p], station.overlap[p][0], majorant, in, out).of(station.demands[p]);
+    }
+  }
+
   // outcome: 0 = c clicks, 1 = d clicks (without its sign (-1)^Delta), 2 = the sum of both.
   const Elements<T>& elements(std::size_t p, int outcome) const {
     return elements_[p][outcome == 1 && alike_[p] ? 0 : static_cast<std::size_t>(outcome)];

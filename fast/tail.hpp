@@ -38,8 +38,29 @@ R end_bound(const R& dark, const R& registering, int outcome, double n) {
     case bit_cross:
       return smaller(one, R(2.0) * dark + first);
     default:
-      return smaller(one, dark + first);
+      break;
   }
+  if (outcome < first_free) return smaller(one, dark + first);
+  const int clicks = (demand_of_plus(outcome) == Demand::clicks) + (demand_of_cross(outcome) == Demand::clicks);
+  if (clicks == 0) return one;
+  return clicks == 1 ? smaller(one, dark + first) : end_bound(dark, registering, both_click, n);
+}
+
+// The same of a station for a free pattern.
+template <class R>
+R free_station_bound(const R& dark, const R& tau_r, const R& tau_l, double n_r, double n_l, int clicks) {
+  if (clicks == 0) return R(1.0);
+  if (clicks == 1) return smaller(R(1.0), dark + R(n_r) * tau_r + R(n_l) * tau_l);
+  return station_bound(dark, tau_r, tau_l, n_r, n_l, 1);
+}
+
+// Clicks that a free pattern demands of a station.
+inline int clicks_of(const StationPlan& station) {
+  int clicks = 0;
+  for (const auto& polarisation : station.demands) {
+    for (const Demand demand : polarisation) clicks += demand == Demand::clicks ? 1 : 0;
+  }
+  return clicks;
 }
 
 // The number of click patterns that a list of terms accepts.

@@ -23,7 +23,7 @@ void Campaign::add(const model::Chain& chain, const reference::Request& request)
   SCOPED_TRACE(describe_chain(chain));
   ++chains_;
   const double start = cpu_seconds();
-  const std::vector<fast::Value> values = fast::evaluate(chain, request.quantities);
+  const std::vector<fast::Value> values = fast::evaluate(chain, request.quantities, request.pattern);
   const double middle = cpu_seconds();
   const auto enclosed = reference::enclose(chain, request);
   fast_seconds_ += middle - start;

@@ -1,5 +1,7 @@
 #include "tests/support/random_chain.hpp"
 
+#include <array>
+
 #include <cmath>
 
 namespace heraldgauge::test {
@@ -69,6 +71,12 @@ class Drawer {
 std::string text_of(const Detector& detector) {
   return "{eta " + detector.efficiency.text() + " d " + detector.dark_probability.text() +
          (detector.dark_model == model::DarkModel::thermal ? " thermal}" : "}");
+}
+
+model::Ask random_ask(Random& random) {
+  using Kind = model::Ask::Kind;
+  constexpr std::array<Kind, 4> kinds{Kind::clicks, Kind::clicks, Kind::silent, Kind::not_looked_at};
+  return {kinds[random() % kinds.size()]};
 }
 
 }  // namespace
@@ -142,6 +150,15 @@ std::string describe_chain(const Chain& chain) {
     for (const Detector& detector : end->detectors) text += " " + text_of(detector);
   }
   return text;
+}
+
+model::Pattern random_pattern(Random& random, std::size_t stations) {
+  model::Pattern pattern;
+  for (std::size_t k = 0; k < stations; ++k) {
+    pattern.stations.push_back({random_ask(random), random_ask(random), random_ask(random), random_ask(random)});
+  }
+  for (auto* end : {&pattern.left, &pattern.right}) *end = {random_ask(random), random_ask(random)};
+  return pattern;
 }
 
 }  // namespace heraldgauge::test

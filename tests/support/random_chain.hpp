@@ -4,6 +4,7 @@
 #include <string>
 
 #include "reference/model/chain.hpp"
+#include "reference/model/pattern.hpp"
 #include "tests/support/effort.hpp"
 
 namespace heraldgauge::test {
@@ -21,6 +22,9 @@ struct ChainRecipe {
 };
 
 model::Chain random_chain(Random& random, const ChainRecipe& recipe = {});
+
+// Every detector must click (half of the time), be silent, or is not looked at.
+model::Pattern random_pattern(Random& random, std::size_t stations);
 
 // An exact binary64 number, uniform or log-uniform.
 double uniform(Random& random, double from, double to);

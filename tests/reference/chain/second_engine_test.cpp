@@ -20,21 +20,6 @@ using reference::Enclosure;
 
 constexpr reference::Precision arb_bits = 700;
 
-Ask random_ask(Random& random) {
-  constexpr std::array<Ask::Kind, 4> kinds{Ask::Kind::clicks, Ask::Kind::clicks, Ask::Kind::silent,
-                                           Ask::Kind::not_looked_at};
-  return {kinds[random() % kinds.size()]};
-}
-
-Pattern random_pattern(Random& random, std::size_t stations) {
-  Pattern pattern;
-  for (std::size_t k = 0; k < stations; ++k) {
-    pattern.stations.push_back({random_ask(random), random_ask(random), random_ask(random), random_ask(random)});
-  }
-  for (auto* end : {&pattern.left, &pattern.right}) *end = {random_ask(random), random_ask(random)};
-  return pattern;
-}
-
 void add_background(Random& random, Chain& chain) {
   const auto background = [&] {
     return model::Background{Rational(log_uniform(random, 1e-6, 1)), 1 + static_cast<long>(random() % 5)};

@@ -15,20 +15,6 @@ using model::Chain;
 using model::Pattern;
 using test::Random;
 
-Ask random_ask(Random& random) { return Ask{static_cast<Ask::Kind>(random() % 3)}; }
-
-Pattern random_pattern(Random& random, const Chain& chain) {
-  Pattern pattern;
-  pattern.stations.resize(chain.station_count());
-  for (auto& station : pattern.stations) {
-    for (Ask& ask : station) ask = random_ask(random);
-  }
-  for (auto* end : {&pattern.left, &pattern.right}) {
-    for (Ask& ask : *end) ask = random_ask(random);
-  }
-  return pattern;
-}
-
 // The herald's accepted strings as patterns that also ask exact clicks of the ends.
 std::vector<Pattern> herald_patterns(const Chain& chain, std::size_t left, std::size_t right) {
   const auto asked = [](std::size_t clicks, std::size_t bit) {
@@ -54,7 +40,7 @@ std::vector<Pattern> herald_patterns(const Chain& chain, std::size_t left, std::
 TEST(Ring, OverlapsThePlainDeterminantOnRandomPatterns) {
   test::for_each_case(60, 20261, [](Random& random) {
     const Chain chain = test::random_chain(random, {.largest_station_count = 2});
-    const Pattern pattern = random_pattern(random, chain);
+    const Pattern pattern = test::random_pattern(random, chain.station_count());
     const Interval ring = pattern_probability(Field<Interval>{220}, chain, pattern);
     const Interval plain = plain_pattern_probability(chain, pattern, 260);
     EXPECT_TRUE(overlap(ring, plain)) << test::describe_chain(chain);
@@ -68,7 +54,7 @@ TEST(Ring, OverlapsThePlainDeterminantWithSharedBackground) {
     Chain chain = test::random_chain(random, {.smallest_station_count = 1, .largest_station_count = 1});
     chain.stations[0].background = {model::Rational(1, 50), 3};
     chain.left_end.background = {model::Rational(1, 20), 1};
-    const Pattern pattern = random_pattern(random, chain);
+    const Pattern pattern = test::random_pattern(random, chain.station_count());
     EXPECT_TRUE(overlap(pattern_probability(Field<Interval>{220}, chain, pattern),
                         plain_pattern_probability(chain, pattern, 220)));
   });
