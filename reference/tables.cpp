@@ -2,6 +2,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <limits>
 
 #include "reference/determinant/exact_zero.hpp"
 #include "reference/determinant/joint.hpp"
@@ -56,7 +57,8 @@ void IntervalTables::note(const Bounded<Value>& bounded, const Interval& widest)
   }
   const double log2_tail = log2_upper(bounded.tail);
   if (!provenance_.tail || log2_tail > log2_upper(*provenance_.tail)) provenance_.tail = bounded.tail;
-  if (log2_tail >= widest.log2_width() - 1) provenance_.limited_by_tail = true;
+  const bool nothing_left_out = log2_tail == -std::numeric_limits<double>::infinity();
+  if (!nothing_left_out && log2_tail >= widest.log2_width() - 1) provenance_.limited_by_tail = true;
 }
 
 const Interval& IntervalTables::herald() {

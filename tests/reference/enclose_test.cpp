@@ -222,5 +222,23 @@ TEST(Enclose, SaysUndecidedWhereThePrecisionIsNotEnough) {
   EXPECT_LT(result.digits, 30);
 }
 
+// Without stations the herald is 1 exactly, with nothing left out: that must not pass for a tail to be improved.
+TEST(Enclose, RareEndPatternsOfOneSourceAreCertified) {
+  Chain chain = test::alike_chain(0, "1/200000", "1/1000", "1/100", "1/1000000");
+  chain.left_end.analyser_deg = Rational(581, 16);
+  chain.right_end.analyser_deg = Rational(-8835, 64);
+  Request request;
+  request.quantities = {{QuantityKind::end_pattern, 15}};
+  request.digits = 20;
+  request.intervals_only = true;
+  const Result result = enclose_or_fail(chain, request).at(0);
+  EXPECT_EQ(result.status, Status::certified) << result.reason;
+  request.digits = 50;
+  const Result finer = enclose_or_fail(chain, request).at(0);
+  ASSERT_EQ(finer.status, Status::certified) << finer.reason;
+  EXPECT_LE(result.enclosure->lower, finer.enclosure->lower);
+  EXPECT_GE(result.enclosure->upper, finer.enclosure->upper);
+}
+
 }  // namespace
 }  // namespace heraldgauge::reference
