@@ -158,7 +158,8 @@ std::vector<Hypothesis> round_off_pattern(const Data& data) {
   Hypothesis found =
       pattern("round-off", std::to_string(static_cast<int>(digits)) + " digits",
               "Small differences of both signs without order, as rounding leaves them.", data, std::move(prediction));
-  found.complexity += complexity_of_pattern;  // it predicts a size only, no number
+  found.complexity += complexity_of_pattern;
+  found.from_the_table = true;
   return {std::move(found)};
 }
 

@@ -36,10 +36,18 @@ std::vector<Hypothesis> all_hypotheses(const Data& data, unsigned threads) {
   return all;
 }
 
+// The share of the table that speaks for an explanation. One that predicts no number of its own fits by construction,
+// so that one that does and explains nearly all goes before it.
+double worth(const Hypothesis& one) {
+  constexpr double of_what_fits_by_construction = 0.95;
+  const auto explained = static_cast<double>(one.score.explained);
+  return one.from_the_table ? of_what_fits_by_construction * explained : explained;
+}
+
 // Explanations of equal worth keep the order of the registries. Those that explain everything are of equal worth: what
 // is left of their residuals is the rounding of the table.
 bool comes_before(const Data& data, const Hypothesis& a, const Hypothesis& b) {
-  if (a.score.explained != b.score.explained) return a.score.explained > b.score.explained;
+  if (worth(a) != worth(b)) return worth(a) > worth(b);
   if (a.complexity != b.complexity) return a.complexity < b.complexity;
   return !explains_everything(data, a.score) && a.score.residual < b.score.residual;
 }

@@ -22,6 +22,8 @@ struct Hypothesis {
   // patterns fitted to the table, one cause before two.
   int complexity = 0;
   Prediction prediction;
+  bool from_the_table =
+      false;  // predicts no number of its own, only how numbers scatter: `prediction` repeats the table
   Score score;
 };
 

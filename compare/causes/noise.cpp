@@ -128,6 +128,7 @@ std::vector<Hypothesis> shot_sampling(const Data& data) {
                   "Numbers scatter as shares of a finite number of simulated trials do."}};
   found.complexity = complexity_of_pattern + complexity_of_setting;
   found.prediction = exact_prediction(data);
+  found.from_the_table = true;
   for (std::size_t i = 0; i < single.size(); ++i) {
     if (single[i]) found.prediction[i] = data.targets[i].given;  // any number within the scatter
   }
