@@ -5,6 +5,7 @@
 #include <algorithm>
 
 #include "compare/chosen.hpp"
+#include "compare/status_text.hpp"
 #include "reference/arithmetic/decimal.hpp"
 #include "reference/model/exact_number.hpp"
 
@@ -17,18 +18,6 @@ using reference::Direction;
 
 constexpr int error_digits = 6;
 constexpr int value_digits = 17;
-
-std::string status_text(fast::Status status) {
-  switch (status) {
-    case fast::Status::computed:
-      return "computed";
-    case fast::Status::undefined:
-      return "undefined";
-    case fast::Status::declined:
-      break;
-  }
-  return "declined";
-}
 
 std::optional<std::string> rounded(const std::optional<Rational>& x) {
   return x ? std::optional<std::string>(decimal(*x, error_digits, Direction::nearest)) : std::nullopt;

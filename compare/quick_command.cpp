@@ -5,6 +5,7 @@
 #include <span>
 
 #include "compare/points.hpp"
+#include "compare/status_text.hpp"
 #include "fast/evaluate.hpp"
 #include "reference/arithmetic/decimal.hpp"
 
@@ -16,18 +17,6 @@ constexpr std::uint64_t block_size = 4096;
 
 // Digits of the printed error bound.
 constexpr int bound_digits = 3;
-
-std::string status_text(fast::Status status) {
-  switch (status) {
-    case fast::Status::computed:
-      return "computed";
-    case fast::Status::undefined:
-      return "undefined";
-    case fast::Status::declined:
-      break;
-  }
-  return "declined";
-}
 
 reports::QuickResult record_of(const fast::Value& value) {
   reports::QuickResult record;
