@@ -8,8 +8,7 @@
 
 namespace heraldgauge::bench {
 
-// Multiply-adds of the transfer from source to source and of the contractions at the right end, counted from the plan
-// of a chain's first attempt; tables of station and end elements, weights and tail bounds are left out. Throws where
+// Multiply-adds of a chain's first attempt, counted from its plan (fast/operation_count.hpp says which). Throws where
 // the fast evaluator does not serve the chain.
 double multiply_adds(const model::Chain& chain, const std::vector<model::Quantity>& quantities);
 

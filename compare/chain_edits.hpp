@@ -38,4 +38,12 @@ void for_each_squeezed_source(model::Chain& chain, Edit&& edit) {
   }
 }
 
+// The mean pairs per polarisation, mu = lam/(1-lam), of every squeezed source times a factor: lam = mu/(1+mu).
+inline void multiply_mean_pairs(model::Chain& chain, const model::Real& factor) {
+  for_each_squeezed_source(chain, [&](model::Source& source) {
+    const model::Real more = factor * source.pair_parameter;
+    source.pair_parameter = more / (model::Real(1) - source.pair_parameter + more);
+  });
+}
+
 }  // namespace heraldgauge::compare

@@ -63,7 +63,7 @@ class DroppedPairs {
   void pass(std::size_t k, const Buffer<T>& weight, const Buffer<Buffer<R>>& kept, const StationOperator<T>& station) {
     const Buffer<R> beyond = next_beyond(dropped_weight(k + 1, weight), kept);
     for (Shape& shape : shapes_) pass_shape(k, weight, station, shape.vector);
-    if (shapes_.size() == dropped_.size()) make_shapes_of_views();
+    if (!own_shapes_ && shapes_.size() == dropped_.size()) make_shapes_of_views();
     add_shape(plan_.cutoffs[k + 1], weight);
     for (Shape& shape : shapes_) {
       shape.by_pairs.assign(static_cast<std::size_t>(plan_.cutoffs[k + 1]) + 1, R(0.0));
@@ -145,6 +145,7 @@ class DroppedPairs {
       dropped_[view].shares[view] = R(1.0);
     }
     shapes_ = std::move(own);
+    own_shapes_ = true;
   }
 
   // What a source beyond its cut-off before the station leads to: weight w, the same for all a + b = n.
@@ -156,12 +157,11 @@ class DroppedPairs {
         added.row(0, a)[b] = weight[n] * T(from_beyond_[n]);
       }
     }
-    const bool own = shapes_.size() == dropped_.size();
     for (std::size_t view = 0; view < dropped_.size(); ++view) {
-      if (own) add_scaled(T(dropped_[view].beyond), added, shapes_[view].vector);
-      if (!own) dropped_[view].shares.push_back(dropped_[view].beyond);
+      if (own_shapes_) add_scaled(T(dropped_[view].beyond), added, shapes_[view].vector);
+      if (!own_shapes_) dropped_[view].shares.push_back(dropped_[view].beyond);
     }
-    if (!own) shapes_.push_back({std::move(added), {}});
+    if (!own_shapes_) shapes_.push_back({std::move(added), {}});
   }
 
   static void add_scaled(const T& factor, const Sectors<T>& from, Sectors<T>& to) {
@@ -172,6 +172,7 @@ class DroppedPairs {
   const LinkModes<T>& modes_;
   Buffer<Dropped> dropped_;  // one a left view
   Buffer<Shape> shapes_;
+  bool own_shapes_ = false;  // one a view
   Sectors<T> after_;
   Buffer<R> into_beyond_;  // from n pairs within the cut-off, or one beyond (the last)
   Buffer<R> from_beyond_;  // to n pairs

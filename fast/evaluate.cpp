@@ -22,7 +22,6 @@ constexpr std::size_t short_chain = 20;
 constexpr double bound_allowed(std::size_t stations) { return stations <= short_chain ? 1e-11 : 9e-11; }
 // Beyond this even then, a value is not given.
 constexpr double bound_served = 1e-9;
-constexpr int most_attempts = 8;
 
 // A point with everything that does not change between attempts.
 struct Point {
@@ -74,9 +73,10 @@ double unit_of(const Point& point) {
   return Precision<T>::unit + 0x1p-102 / point.modes.smallest_complement;
 }
 
+// Returns the largest part that the cut-offs may have left out of any value.
 template <class T>
-Accuracy attempt(const Point& point, const Planned& planned, const std::vector<Quantity>& quantities,
-                 std::span<Value> values) {
+double attempt(const Point& point, const Planned& planned, const std::vector<Quantity>& quantities,
+               std::span<Value> values) {
   const LinkModes<T> modes = rounded_modes<T>({&point.modes.modes});
   const KernelResult<T> result = run_kernel(planned.plan, modes);
   return form_values(*point.chain, sums_of(result, planned, modes.right, unit_of<T>(point)), quantities, values);
@@ -84,14 +84,14 @@ Accuracy attempt(const Point& point, const Planned& planned, const std::vector<Q
 
 // The values by T, again with more pairs as long as the cut-offs leave out too much.
 template <class T>
-void evaluate_with_more_pairs(Accuracy accuracy, Point& point, const std::vector<Quantity>& quantities,
+void evaluate_with_more_pairs(double tail_share, Point& point, const std::vector<Quantity>& quantities,
                               std::span<Value> values) {
   const Needs needs = needs_of(quantities);
-  for (int i = 0; i < most_attempts && accuracy.tail_share > tail_allowed; ++i) {
+  for (int i = 0; i < most_attempts && tail_share > tail_allowed; ++i) {
     const auto cutoffs = more_pairs(point.cutoffs, point.numbers);
     if (!cutoffs) break;
     point.cutoffs = *cutoffs;
-    accuracy = attempt<T>(point, make_plan(point.numbers, point.modes, needs, point.cutoffs), quantities, values);
+    tail_share = attempt<T>(point, make_plan(point.numbers, point.modes, needs, point.cutoffs), quantities, values);
   }
 }
 
@@ -121,9 +121,9 @@ void give_pattern(const Point& point, const model::Pattern& pattern, std::span<V
 }
 
 // Takes more pairs, then double-double, until the bounds are met or nothing more can be done.
-void improve(const Accuracy& accuracy, Point& point, const std::vector<Quantity>& quantities,
+void improve(double tail_share, Point& point, const std::vector<Quantity>& quantities,
              const std::optional<model::Pattern>& pattern, std::span<Value> values) {
-  evaluate_with_more_pairs<double>(accuracy, point, quantities, values);
+  evaluate_with_more_pairs<double>(tail_share, point, quantities, values);
   evaluate_precisely(point, quantities, values);
   if (pattern) give_pattern(point, *pattern, values);
   for (Value& value : values) {
@@ -206,8 +206,8 @@ class Block {
     }
   }
 
-  void improve_further(std::size_t index, const Accuracy& accuracy) {
-    improve(accuracy, points_[index], quantities_, pattern_, values_of(index));
+  void improve_further(std::size_t index, double tail_share) {
+    improve(tail_share, points_[index], quantities_, pattern_, values_of(index));
   }
 
   std::span<Value> values_of(std::size_t index) const {

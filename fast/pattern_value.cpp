@@ -43,7 +43,6 @@ Value pattern_value(const ChainNumbers& numbers, const ExactModes& modes, std::v
   const auto declined = [](const char* reason) { return Value{pattern_probability, Status::declined, reason, {}, 0}; };
   if (counts_photons(pattern)) return declined("the pattern counts photons");
   PatternSum sum = pattern_sum(modes, make_pattern_plan(numbers, modes, pattern, cutoffs), unit);
-  constexpr int most_attempts = 8;
   for (int i = 0; i < most_attempts && sum.amount.tail > tail_allowed * std::fabs(sum.amount.value); ++i) {
     const auto more = more_pairs(cutoffs, numbers);
     if (!more) break;

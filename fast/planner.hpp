@@ -47,7 +47,8 @@ Plan make_pattern_plan(const ChainNumbers& numbers, const ExactModes& modes, con
 // Pairs to keep per source so that the tail is likely below 5e-14 of every number; none where a source would need more
 // than largest_pairs. The kernel's bound decides whether it was enough.
 std::optional<std::vector<int>> first_cutoffs(const ChainNumbers& numbers, const ExactModes& modes);
-// A second guess after one that fell short.
+// A second guess after one that fell short; so many are made.
+inline constexpr int most_attempts = 8;
 std::optional<std::vector<int>> more_pairs(std::vector<int> cutoffs, const ChainNumbers& numbers);
 
 }  // namespace heraldgauge::fast

@@ -174,16 +174,11 @@ Scaled scaled(double x, long exponent) {
   return {significand, significand == 0 ? 0 : own + exponent};
 }
 
-Accuracy form_values(const model::Chain& chain, const Sums& sums, const std::vector<Quantity>& quantities,
-                     std::span<Value> values) {
+double form_values(const model::Chain& chain, const Sums& sums, const std::vector<Quantity>& quantities,
+                   std::span<Value> values) {
   Former former(chain, sums);
-  Accuracy accuracy;
-  for (std::size_t i = 0; i < quantities.size(); ++i) {
-    values[i] = former.form(quantities[i]);
-    accuracy.worst_bound = std::max(accuracy.worst_bound, values[i].relative_error_bound);
-  }
-  accuracy.tail_share = former.tail_share();
-  return accuracy;
+  for (std::size_t i = 0; i < quantities.size(); ++i) values[i] = former.form(quantities[i]);
+  return former.tail_share();
 }
 
 }  // namespace heraldgauge::fast

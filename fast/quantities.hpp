@@ -9,15 +9,10 @@
 
 namespace heraldgauge::fast {
 
-// How well the values of a point are known.
-struct Accuracy {
-  double tail_share = 0;   // the largest part of any value that the cut-offs may have left out, relative
-  double worst_bound = 0;  // the largest relative error bound
-};
-
-// Writes one value a quantity, in order; capacities come from the chain alone.
-Accuracy form_values(const model::Chain& chain, const Sums& sums, const std::vector<model::Quantity>& quantities,
-                     std::span<Value> values);
+// Writes one value a quantity, in order; capacities come from the chain alone. Returns the largest part of any value
+// that the cut-offs may have left out, relative.
+double form_values(const model::Chain& chain, const Sums& sums, const std::vector<model::Quantity>& quantities,
+                   std::span<Value> values);
 
 // x * 2^exponent, normalised.
 Scaled scaled(double x, long exponent);

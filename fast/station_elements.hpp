@@ -105,13 +105,12 @@ Elements<T> difference(const T& a, const T& b, const T& x, const std::array<Adde
   Elements<T> d(in, out);
   for (int delta = 0; delta <= d.deltas(); ++delta) {
     for (int i = 0; i <= in - delta; ++i) {
-      T value(0.0);
-      if (i > 0) value += a * d.row(delta, i - 1)[0];
-      if (delta > 0) value += x * d.row(delta - 1, i)[0];
-      for (const Addend<T>& k : addends) {
-        if (i > 0) value += k.kr * k.g.row(delta, i - 1)[0];
-        if (delta > 0) value += k.z * k.g.row(delta - 1, i)[0];
-      }
+      const auto step = [&](const Elements<T>& from, const T& straight, const T& across) {
+        const T value = i > 0 ? straight * from.row(delta, i - 1)[0] : T(0.0);
+        return delta > 0 ? value + across * from.row(delta - 1, i)[0] : value;
+      };
+      T value = step(d, a, x);
+      for (const Addend<T>& k : addends) value += step(k.g, k.kr, k.z);
       d.row(delta, i)[0] = value;
     }
   }

@@ -41,8 +41,10 @@ class StationOperator {
     return {elements(0, term.h), elements(shared_ ? 0 : 1, term.v), shared_ && (term.h == term.v || alike_[0])};
   }
 
-  // Three recurrences one upon the other, the last with two addends, against one difference.
-  static constexpr double free_pattern_roundings = 4;
+  // station_count() takes four roundings a photon and 14 for two elements. A term of a free pattern's element has one
+  // factor a photon, from one of the recurrences: at most five roundings (coefficient, product, three sums, where there
+  // are two addends). Dark events add three sums and three products, a silent detector one: seven an element.
+  static constexpr double free_pattern_roundings = 2;
 
   // By how much subtractions magnified the error of an element, at most.
   const Rough<T>& loss() const { return loss_; }

@@ -14,12 +14,7 @@ Departure mean_pairs_doubled() {
   departure.claimed = "nowhere; the two agree to first order at best";
   departure.source = "common practice";
   departure.touches = touches_probabilities;
-  return by_edited_chain(std::move(departure), [](model::Chain& chain) {
-    for_each_squeezed_source(chain, [](model::Source& source) {
-      const Real lam = source.pair_parameter;
-      source.pair_parameter = Real(2) * lam / (Real(1) + lam);  // mu = lam/(1-lam)
-    });
-  });
+  return by_edited_chain(std::move(departure), [](model::Chain& chain) { multiply_mean_pairs(chain, Real(2)); });
 }
 
 }  // namespace heraldgauge::compare

@@ -15,12 +15,8 @@ Departure mean_pairs_per_pulse() {
   departure.claimed = "nowhere; the two agree to first order at best";
   departure.source = "common practice";
   departure.touches = touches_probabilities;
-  return by_edited_chain(std::move(departure), [](model::Chain& chain) {
-    for_each_squeezed_source(chain, [](model::Source& source) {
-      const Real lam = source.pair_parameter;
-      source.pair_parameter = lam / (Real(2) - lam);  // mu = lam/(1-lam)
-    });
-  });
+  const Real half(model::Rational(1, 2));
+  return by_edited_chain(std::move(departure), [half](model::Chain& chain) { multiply_mean_pairs(chain, half); });
 }
 
 }  // namespace heraldgauge::compare

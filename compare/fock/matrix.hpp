@@ -1,28 +1,13 @@
 #pragma once
-// A dense matrix, row by row.
 
 #include <vector>
+
+#include "reference/arithmetic/matrix.hpp"
 
 namespace heraldgauge::compare::fock {
 
 template <class Number>
-class Matrix {
- public:
-  Matrix(long rows, long columns, const Number& value)
-      : rows_(rows), columns_(columns), entries_(static_cast<std::size_t>(rows * columns), value) {}
-
-  Number& operator()(long row, long column) { return entries_[static_cast<std::size_t>(row * columns_ + column)]; }
-  const Number& operator()(long row, long column) const {
-    return entries_[static_cast<std::size_t>(row * columns_ + column)];
-  }
-  long rows() const { return rows_; }
-  long columns() const { return columns_; }
-
- private:
-  long rows_;
-  long columns_;
-  std::vector<Number> entries_;
-};
+using Matrix = reference::DenseMatrix<Number>;
 
 // One matrix a sector |Delta| = 0, 1, ...
 template <class Number>
