@@ -6,6 +6,7 @@
 #include <cmath>
 #include <functional>
 
+#include "fast/evaluate.hpp"
 #include "reference/arithmetic/decimal.hpp"
 #include "tests/compare/audit/audited.hpp"
 #include "tests/support/effort.hpp"
@@ -108,6 +109,27 @@ TEST(Pattern, SaysWhereNothingFits) {
       causes_of([](int row, const Rational& x) -> Rational { return x * (2 + row * row % 7); }, 10, &note);
   EXPECT_TRUE(causes.empty()) << causes[0].cause;
   EXPECT_NE(note.find("Nothing fits"), std::string::npos);
+}
+
+// Where a key rate vanishes, 17 right digits of a binary64 code are not right to 1e-12 of so small a number.
+TEST(Pattern, RoundingWhereAKeyRateVanishesIsNoCause) {
+  const std::string trunk =
+      "chain.stations = 3\nsource.pair_parameter = 0.01\nstation.detector.efficiency = 0.5\n"
+      "station.detector.dark_probability = 1e-6\nend.detector.efficiency = 0.5\n"
+      "end.detector.dark_probability = 1e-6\nchannel.transmittance = 0.5\n";
+  const auto scenario = model::read_scenario(trunk, "trunk");
+  std::string table = "channel.transmittance,key_rate\n";
+  for (int row = 0; row < 60; ++row) {
+    const Rational transmittance(520000 + 100 * row, 1000000);
+    const auto chain = model::chain_with(*scenario, {{"channel.transmittance", transmittance}});
+    const fast::Value value = fast::evaluate(*chain, {{model::QuantityKind::key_rate}}).front();
+    table +=
+        reference::decimal(transmittance, 6, reference::Direction::nearest) + "," + fast::decimal(value.value) + "\n";
+  }
+  const reports::AuditConclusion conclusion = audited(trunk, table).answer.conclusion;
+  EXPECT_GT(conclusion.summary.counts.differs, 0U) << "the table has to show it";
+  EXPECT_TRUE(conclusion.causes.empty()) << conclusion.causes[0].cause;
+  EXPECT_NE(conclusion.causes_note.find("small rest"), std::string::npos) << conclusion.causes_note;
 }
 
 }  // namespace
